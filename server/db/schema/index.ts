@@ -1,0 +1,7 @@
+export * from './facility'
+export * from './helium'
+export * from './money'
+export * from './people'
+export * from './results'
+export * from './runs'
+export * from './samples'

@@ -1,0 +1,128 @@
+import { sql } from 'drizzle-orm'
+import { bigint, boolean, check, doublePrecision, index, integer, jsonb, pgTable, primaryKey, text, uuid } from 'drizzle-orm/pg-core'
+import { createdAt, id, instant, span } from '../columns'
+import { cryostats } from './facility'
+import { rateCards } from './money'
+import { groups, people } from './people'
+import { samples } from './samples'
+
+export const RUN_STATES = ['draft', 'asked', 'approved', 'confirmed', 'running', 'finished', 'settled', 'declined', 'withdrawn', 'lapsed'] as const
+export type RunState = (typeof RUN_STATES)[number]
+
+export const RUN_PHASES = ['prepare', 'cool-to-77', 'cool-to-base', 'measure', 'warm-up', 'turn-round'] as const
+export type RunPhase = (typeof RUN_PHASES)[number]
+
+/** What was asked of planning, kept with the run. */
+export interface RunPlanInput {
+  temperatureLowK: number
+  temperatureHighK: number
+  points: number
+  nitrogenPrecool: boolean
+}
+
+/** One planned phase: hours with their 80 % interval. */
+export interface PlannedPhaseRecord { phase: RunPhase, hours: number, lowHours: number, highHours: number }
+
+/** The estimate as it stood when the run was asked for; later learning does not change it. */
+export interface RunEstimateRecord {
+  phases: PlannedPhaseRecord[]
+  totalHours: { low: number, likely: number, high: number }
+  heliumLitres: { low: number, likely: number, high: number }
+  heliumSplitLitres: Record<string, number>
+  basis: string[]
+}
+
+/** One quoted line; amounts in minor units. */
+export interface QuoteLineRecord { kind: string, label: string, unit: string, quantity: number, lowQuantity: number, highQuantity: number, unitPriceMinor: number, netMinor: number }
+
+/** The quote as offered, locked to its rate card. */
+export interface QuoteRecord {
+  lines: QuoteLineRecord[]
+  lowMinor: number
+  likelyMinor: number
+  highMinor: number
+  vatBasisPoints: number
+  reverseCharge: boolean
+  depositMinor: number
+  lockedUntil: string
+}
+
+/** The run: one visit of one or more samples to one cryostat, from plan to bill. */
+export const runs = pgTable('runs', {
+  id: id(),
+  number: integer('number').generatedAlwaysAsIdentity().notNull().unique(),
+  title: text('title').notNull(),
+  cryostatId: uuid('cryostat_id').notNull().references(() => cryostats.id),
+  groupId: uuid('group_id').notNull().references(() => groups.id),
+  requestedBy: uuid('requested_by').notNull().references(() => people.id),
+  state: text('state').$type<RunState>().notNull(),
+  /** Raised by every transition; a stale writer finds no row. */
+  version: integer('version').notNull().default(1),
+  slot: span('slot').notNull(),
+  planInput: jsonb('plan_input').$type<RunPlanInput>().notNull(),
+  estimate: jsonb('estimate').$type<RunEstimateRecord>().notNull(),
+  quote: jsonb('quote').$type<QuoteRecord>().notNull(),
+  rateCardId: uuid('rate_card_id').notNull().references(() => rateCards.id),
+  costCode: text('cost_code'),
+  purchaseOrder: text('purchase_order'),
+  payBy: instant('pay_by'),
+  startedAt: instant('started_at'),
+  finishedAt: instant('finished_at'),
+  cutShort: boolean('cut_short').notNull().default(false),
+  /** The browser's key of the request, so that pressing twice asks once. */
+  clientKey: uuid('client_key').unique(),
+  createdAt: createdAt(),
+}, table => [
+  index('runs_cryostat_state').on(table.cryostatId, table.state),
+  index('runs_group').on(table.groupId),
+  index('runs_state').on(table.state),
+  check('runs_state', sql`${table.state} in ('draft', 'asked', 'approved', 'confirmed', 'running', 'finished', 'settled', 'declined', 'withdrawn', 'lapsed')`),
+  check('runs_slot_bounded', sql`not isempty(${table.slot}) and not lower_inf(${table.slot}) and not upper_inf(${table.slot})`),
+])
+
+export const runSamples = pgTable('run_samples', {
+  runId: uuid('run_id').notNull().references(() => runs.id),
+  sampleId: uuid('sample_id').notNull().references(() => samples.id),
+}, table => [primaryKey({ columns: [table.runId, table.sampleId] })])
+
+/** Every change of state, kept for ever (append-only by trigger). */
+export const runTransitions = pgTable('run_transitions', {
+  id: bigint('id', { mode: 'number' }).primaryKey().generatedAlwaysAsIdentity(),
+  runId: uuid('run_id').notNull().references(() => runs.id),
+  fromState: text('from_state').$type<RunState>(),
+  toState: text('to_state').$type<RunState>().notNull(),
+  actorId: uuid('actor_id').references(() => people.id),
+  reason: text('reason').notNull().default(''),
+  at: instant('at').notNull().defaultNow(),
+}, table => [index('run_transitions_run').on(table.runId)])
+
+export const RUN_ENTRY_KINDS = ['phase', 'level', 'transfer', 'temperature', 'gas-meter', 'note'] as const
+export type RunEntryKind = (typeof RUN_ENTRY_KINDS)[number]
+
+/** One line of the run sheet. Only the columns of its kind are filled; readings at 1 Hz will have a table of their own. */
+export const runEntries = pgTable('run_entries', {
+  id: id(),
+  runId: uuid('run_id').notNull().references(() => runs.id),
+  kind: text('kind').$type<RunEntryKind>().notNull(),
+  at: instant('at').notNull(),
+  recordedBy: uuid('recorded_by').references(() => people.id),
+  recordedAt: instant('recorded_at').notNull().defaultNow(),
+  clientKey: uuid('client_key').notNull().unique(),
+  phase: text('phase').$type<RunPhase>(),
+  levelPercent: doublePrecision('level_percent'),
+  liquidLitres: doublePrecision('liquid_litres'),
+  boilOffLitresPerHour: doublePrecision('boil_off_litres_per_hour'),
+  outsideUsual: boolean('outside_usual').notNull().default(false),
+  fromAccountId: uuid('from_account_id'),
+  drawnLitres: doublePrecision('drawn_litres'),
+  arrivedLitres: doublePrecision('arrived_litres'),
+  temperatureK: doublePrecision('temperature_k'),
+  gasMeterM3: doublePrecision('gas_meter_m3'),
+  note: text('note').notNull().default(''),
+}, table => [
+  index('run_entries_run_at').on(table.runId, table.at),
+  check('run_entries_kind', sql`${table.kind} in ('phase', 'level', 'transfer', 'temperature', 'gas-meter', 'note')`),
+  check('run_entries_level', sql`${table.levelPercent} is null or ${table.levelPercent} between 0 and 100`),
+  check('run_entries_temperature', sql`${table.temperatureK} is null or ${table.temperatureK} > 0`),
+  check('run_entries_transfer', sql`${table.kind} <> 'transfer' or (${table.fromAccountId} is not null and ${table.drawnLitres} > 0 and ${table.arrivedLitres} >= 0 and ${table.arrivedLitres} <= ${table.drawnLitres})`),
+])
