@@ -21,8 +21,8 @@ export interface OpenDatabase {
   db: Database
   /** `pglite` (embedded, one process) or `postgres` (a server, any number of processes). */
   driver: 'pglite' | 'postgres'
-  /** Runs several statements at once; for the job queue's own schema. */
-  executeScript(text: string): Promise<void>
+  /** Runs SQL as text, as the job queue's library writes it; without values the text may hold several statements. */
+  query(text: string, values?: unknown[]): Promise<{ rows: Record<string, unknown>[] }>
   /** Calls back for every notification on a channel; returns a function that stops listening. */
   listen(channel: string, onPayload: (payload: string) => void): Promise<() => Promise<void>>
   close(): Promise<void>
@@ -49,7 +49,10 @@ async function openPostgres(url: string): Promise<OpenDatabase> {
   return {
     db: drizzlePg(pool, { schema }) as unknown as Database,
     driver: 'postgres',
-    executeScript: async (text) => { await pool.query(text) },
+    query: async (text, values) => {
+      const result = await pool.query<Record<string, unknown>>(text, values)
+      return { rows: result.rows ?? [] }
+    },
     listen: async (channel, onPayload) => {
       const client = await pool.connect()
       client.on('notification', message => onPayload(message.payload ?? ''))
@@ -71,7 +74,9 @@ async function openPglite(location: Exclude<DatabaseLocation, { url: string }>):
     return {
       db: drizzlePglite(lite, { schema }) as unknown as Database,
       driver: 'pglite',
-      executeScript: async (text) => { await lite.exec(text) },
+      query: async (text, values) => values?.length
+        ? lite.query<Record<string, unknown>>(text, values)
+        : { rows: (await lite.exec(text)).at(-1)?.rows as Record<string, unknown>[] ?? [] },
       listen: async (channel, onPayload) => lite.listen(channel, onPayload),
       close: async () => {
         await lite.close()

@@ -1,0 +1,31 @@
+import type { Database, OpenDatabase } from '#server/db/client'
+
+let opened: OpenDatabase | undefined
+let opening: Promise<OpenDatabase> | undefined
+
+/** Called once by the database plugin, when it starts opening. */
+export function setDatabaseOpening(promise: Promise<OpenDatabase>) {
+  opening = promise
+}
+
+/** Called by the database plugin when the database is open and migrated, and when it closes. */
+export function setOpenDatabase(database: OpenDatabase | undefined) {
+  opened = database
+}
+
+/** Resolves when the database is open and migrated; requests and jobs wait here while the server starts. */
+export async function databaseReady(): Promise<OpenDatabase> {
+  if (opened) return opened
+  if (!opening) throw new Error('the database plugin has not run')
+  return opening
+}
+
+/**
+ * The database for routes and jobs; services take it as their first argument.
+ *
+ * @throws Error before it is open
+ */
+export function useDatabase(): Database {
+  if (!opened) throw new Error('the database is not open yet')
+  return opened.db
+}
