@@ -348,9 +348,10 @@ CREATE TABLE "run_entries" (
 	"liquid_litres" double precision,
 	"boil_off_litres_per_hour" double precision,
 	"outside_usual" boolean DEFAULT false NOT NULL,
+	"started_at" timestamp with time zone,
 	"from_account_id" uuid,
 	"drawn_litres" double precision,
-	"arrived_litres" double precision,
+	"before_litres" double precision,
 	"temperature_k" double precision,
 	"gas_meter_m3" double precision,
 	"note" text DEFAULT '' NOT NULL,
@@ -358,7 +359,7 @@ CREATE TABLE "run_entries" (
 	CONSTRAINT "run_entries_kind" CHECK ("run_entries"."kind" in ('phase', 'level', 'transfer', 'temperature', 'gas-meter', 'note')),
 	CONSTRAINT "run_entries_level" CHECK ("run_entries"."level_percent" is null or "run_entries"."level_percent" between 0 and 100),
 	CONSTRAINT "run_entries_temperature" CHECK ("run_entries"."temperature_k" is null or "run_entries"."temperature_k" > 0),
-	CONSTRAINT "run_entries_transfer" CHECK ("run_entries"."kind" <> 'transfer' or ("run_entries"."from_account_id" is not null and "run_entries"."drawn_litres" > 0 and "run_entries"."arrived_litres" >= 0 and "run_entries"."arrived_litres" <= "run_entries"."drawn_litres"))
+	CONSTRAINT "run_entries_transfer" CHECK ("run_entries"."kind" <> 'transfer' or (num_nonnulls("run_entries"."from_account_id", "run_entries"."started_at", "run_entries"."drawn_litres", "run_entries"."before_litres", "run_entries"."liquid_litres") = 5 and "run_entries"."drawn_litres" > 0 and "run_entries"."before_litres" >= 0 and "run_entries"."liquid_litres" between "run_entries"."before_litres" and "run_entries"."before_litres" + "run_entries"."drawn_litres" and "run_entries"."started_at" <= "run_entries"."at"))
 );
 --> statement-breakpoint
 CREATE TABLE "run_samples" (

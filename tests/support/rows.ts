@@ -1,8 +1,24 @@
+import type { RunEstimate } from '#shared/planning/types'
 import type { Database } from '#server/db/client'
 import { cryostats, groupMemberships, groups, people, rateCardPrices, rateCards, runs, type GroupClass, type RunState } from '#server/db/schema'
 
 /** Ids of a small facility that tests build on. */
 export interface TestFacility { personId: string, groupId: string, cryostatId: string, rateCardId: string }
+
+const litres = (likely: number) => ({ low: likely * 0.8, likely, high: likely * 1.2 })
+
+/** 48 h and 60 L: four hours of preparation, twenty of cooling, sixteen of measuring, eight to warm up and turn round. */
+const testEstimate: RunEstimate = {
+  phases: ([['prepare', 4, 0], ['cool-to-77', 12, 0], ['cool-to-base', 8, 40], ['measure', 16, 20], ['warm-up', 6, 0], ['turn-round', 2, 0]] as const)
+    .map(([phase, hours, drawnLitres]) => ({ phase, hours: litres(hours), hoursSd: hours * 0.15, drawnLitres, drawnSdLitres: drawnLitres * 0.15 })),
+  totalHours: litres(48),
+  heliumLitres: { cooldown: litres(20), fill: litres(20), transferLoss: litres(10), staticBoilOff: litres(7), measurement: litres(3) },
+  totalHeliumLitres: litres(60),
+  totalHeliumSdLitres: 9,
+  gasUseShare: { mean: 0.5, sd: 0.1 },
+  finishedRunCount: 0,
+  basis: [],
+}
 
 let serial = 0
 
@@ -28,8 +44,8 @@ export async function insertTestRun(db: Database, facility: TestFacility, state:
   const [run] = await db.insert(runs).values({
     title: 'Copper', cryostatId: facility.cryostatId, groupId: facility.groupId, requestedBy: facility.personId, state,
     slot: { startsAt: new Date(startsAt), endsAt: new Date(endsAt) },
-    planInput: { temperatureLowK: 2, temperatureHighK: 10, points: 40, nitrogenPrecool: true },
-    estimate: { phases: [], totalHours: { low: 40, likely: 48, high: 60 }, heliumLitres: { low: 50, likely: 60, high: 80 }, heliumSplitLitres: {}, basis: [] },
+    planInput: { temperatureLowK: 2, temperatureHighK: 10, points: 40, nitrogenPrecool: true, sweeps: 0 },
+    estimate: testEstimate,
     quote: { lines: [], lowMinor: 1, likelyMinor: 2, highMinor: 3, vatBasisPoints: 2500, reverseCharge: false, depositMinor: 1, lockedUntil: '2027-01-01T00:00:00Z' },
     rateCardId: facility.rateCardId,
   }).returning()

@@ -2,6 +2,7 @@ import { sql } from 'drizzle-orm'
 import { bigint, boolean, check, doublePrecision, index, integer, jsonb, pgTable, text, uuid } from 'drizzle-orm/pg-core'
 import { createdAt, id, instant, span } from '../columns'
 import { people } from './people'
+import type { ColdMassPart, TimedPhaseId } from '#shared/planning/types'
 
 export const CRYOSTAT_KINDS = ['bath-he4', 'he3-insert', 'dilution', 'closed-cycle'] as const
 export type CryostatKind = (typeof CRYOSTAT_KINDS)[number]
@@ -42,14 +43,14 @@ export const cryostats = pgTable('cryostats', {
   /** Level calibration of the helium vessel, rising. */
   vesselCalibration: jsonb('vessel_calibration').$type<{ percent: number, litres: number }[]>().notNull(),
   /** What is cooled: kilograms a material. */
-  coldMass: jsonb('cold_mass').$type<{ material: string, massKg: number }[]>().notNull(),
+  coldMass: jsonb('cold_mass').$type<ColdMassPart[]>().notNull(),
   staticBoilOffLitresPerHour: doublePrecision('static_boil_off_litres_per_hour').notNull(),
   transferLossFraction: doublePrecision('transfer_loss_fraction').notNull(),
   recoveryFraction: doublePrecision('recovery_fraction').notNull(),
   /** Stated prior of the share of the gas's enthalpy that cools, learned from finished runs. */
   gasUsePrior: jsonb('gas_use_prior').$type<{ mean: number, standardDeviation: number }>().notNull(),
   /** Stated prior of phase hours. */
-  phaseHoursPrior: jsonb('phase_hours_prior').$type<Record<string, { mean: number, standardDeviation: number }>>().notNull(),
+  phaseHoursPrior: jsonb('phase_hours_prior').$type<Partial<Record<TimedPhaseId, { mean: number, standardDeviation: number }>>>().notNull(),
   /** Thermal conductance of the calorimeter link at 4 K, for the time a point takes. */
   linkConductanceWPerK: doublePrecision('link_conductance_w_per_k').notNull(),
   roomVolumeM3: doublePrecision('room_volume_m3').notNull(),

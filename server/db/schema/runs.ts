@@ -5,12 +5,10 @@ import { cryostats } from './facility'
 import { rateCards } from './money'
 import { groups, people } from './people'
 import { samples } from './samples'
+import type { PhaseId, RunEstimate } from '#shared/planning/types'
 
 export const RUN_STATES = ['draft', 'asked', 'approved', 'confirmed', 'running', 'finished', 'settled', 'declined', 'withdrawn', 'lapsed'] as const
 export type RunState = (typeof RUN_STATES)[number]
-
-export const RUN_PHASES = ['prepare', 'cool-to-77', 'cool-to-base', 'measure', 'warm-up', 'turn-round'] as const
-export type RunPhase = (typeof RUN_PHASES)[number]
 
 /** What was asked of planning, kept with the run. */
 export interface RunPlanInput {
@@ -18,18 +16,7 @@ export interface RunPlanInput {
   temperatureHighK: number
   points: number
   nitrogenPrecool: boolean
-}
-
-/** One planned phase: hours with their 80 % interval. */
-export interface PlannedPhaseRecord { phase: RunPhase, hours: number, lowHours: number, highHours: number }
-
-/** The estimate as it stood when the run was asked for; later learning does not change it. */
-export interface RunEstimateRecord {
-  phases: PlannedPhaseRecord[]
-  totalHours: { low: number, likely: number, high: number }
-  heliumLitres: { low: number, likely: number, high: number }
-  heliumSplitLitres: Record<string, number>
-  basis: string[]
+  sweeps: number
 }
 
 /** One quoted line; amounts in minor units. */
@@ -60,7 +47,8 @@ export const runs = pgTable('runs', {
   version: integer('version').notNull().default(1),
   slot: span('slot').notNull(),
   planInput: jsonb('plan_input').$type<RunPlanInput>().notNull(),
-  estimate: jsonb('estimate').$type<RunEstimateRecord>().notNull(),
+  /** As it stood when the run was asked for; later learning does not change it. */
+  estimate: jsonb('estimate').$type<RunEstimate>().notNull(),
   quote: jsonb('quote').$type<QuoteRecord>().notNull(),
   rateCardId: uuid('rate_card_id').notNull().references(() => rateCards.id),
   costCode: text('cost_code'),
@@ -108,14 +96,16 @@ export const runEntries = pgTable('run_entries', {
   recordedBy: uuid('recorded_by').references(() => people.id),
   recordedAt: instant('recorded_at').notNull().defaultNow(),
   clientKey: uuid('client_key').notNull().unique(),
-  phase: text('phase').$type<RunPhase>(),
+  phase: text('phase').$type<PhaseId>(),
   levelPercent: doublePrecision('level_percent'),
   liquidLitres: doublePrecision('liquid_litres'),
   boilOffLitresPerHour: doublePrecision('boil_off_litres_per_hour'),
   outsideUsual: boolean('outside_usual').notNull().default(false),
+  /** Transfers: when the flow began, which dewar gave how much, and what the vessel held before; `liquidLitres` is what it held after. */
+  startedAt: instant('started_at'),
   fromAccountId: uuid('from_account_id'),
   drawnLitres: doublePrecision('drawn_litres'),
-  arrivedLitres: doublePrecision('arrived_litres'),
+  beforeLitres: doublePrecision('before_litres'),
   temperatureK: doublePrecision('temperature_k'),
   gasMeterM3: doublePrecision('gas_meter_m3'),
   note: text('note').notNull().default(''),
@@ -124,5 +114,5 @@ export const runEntries = pgTable('run_entries', {
   check('run_entries_kind', sql`${table.kind} in ('phase', 'level', 'transfer', 'temperature', 'gas-meter', 'note')`),
   check('run_entries_level', sql`${table.levelPercent} is null or ${table.levelPercent} between 0 and 100`),
   check('run_entries_temperature', sql`${table.temperatureK} is null or ${table.temperatureK} > 0`),
-  check('run_entries_transfer', sql`${table.kind} <> 'transfer' or (${table.fromAccountId} is not null and ${table.drawnLitres} > 0 and ${table.arrivedLitres} >= 0 and ${table.arrivedLitres} <= ${table.drawnLitres})`),
+  check('run_entries_transfer', sql`${table.kind} <> 'transfer' or (num_nonnulls(${table.fromAccountId}, ${table.startedAt}, ${table.drawnLitres}, ${table.beforeLitres}, ${table.liquidLitres}) = 5 and ${table.drawnLitres} > 0 and ${table.beforeLitres} >= 0 and ${table.liquidLitres} between ${table.beforeLitres} and ${table.beforeLitres} + ${table.drawnLitres} and ${table.startedAt} <= ${table.at})`),
 ])
