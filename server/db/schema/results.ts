@@ -4,7 +4,8 @@ import { createdAt, id, instant } from '../columns'
 import { people } from './people'
 import { runs } from './runs'
 import { samples } from './samples'
-import type { HeatCapacityAnalysis, HeatCapacitySample, Verdict } from '#shared/heat-capacity/types'
+import type { HeatCapacitySample, Verdict } from '#shared/heat-capacity/types'
+import type { RejectedRow, StoredAnalysis } from '#shared/types/results'
 
 /** One uploaded table: the raw file as it came, how its columns were read, and the curve that came of it. */
 export const datasets = pgTable('datasets', {
@@ -20,7 +21,7 @@ export const datasets = pgTable('datasets', {
   /** Null until the columns are confirmed. */
   mapping: jsonb('mapping').$type<Record<string, unknown>>(),
   rowCount: integer('row_count'),
-  rejectedRows: jsonb('rejected_rows').$type<{ row: number, column?: string, reason: string }[]>().notNull().default([]),
+  rejectedRows: jsonb('rejected_rows').$type<RejectedRow[]>().notNull().default([]),
   temperatureK: doublePrecision('temperature_k').array(),
   heatCapacity: doublePrecision('heat_capacity').array(),
   sigma: doublePrecision('sigma').array(),
@@ -39,7 +40,7 @@ export const analyses = pgTable('analyses', {
   addendaDatasetId: uuid('addenda_dataset_id').references(() => datasets.id),
   createdBy: uuid('created_by').notNull().references(() => people.id),
   sample: jsonb('sample').$type<HeatCapacitySample>().notNull(),
-  result: jsonb('result').$type<HeatCapacityAnalysis>().notNull(),
+  result: jsonb('result').$type<StoredAnalysis>().notNull(),
   verdict: text('verdict').$type<Verdict>().notNull(),
   engineVersion: text('engine_version').notNull(),
   /** The conversion a person accepted, visible in the record for ever. */
