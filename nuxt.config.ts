@@ -51,6 +51,8 @@ export default defineNuxtConfig({
   telemetry: false,
 
   auth: {
+    // Only its path is used; the module insists on an origin before our configuration is read.
+    baseURL: 'http://localhost/api/auth',
     provider: { type: 'authjs', addDefaultCallbackUrl: true },
     globalAppMiddleware: { isEnabled: true },
     sessionRefresh: { enablePeriodically: false, enableOnWindowFocus: true },

@@ -1,4 +1,5 @@
-import { Auth, type AuthConfig, CredentialsSignin } from '@auth/core'
+import { Auth, type AuthConfig } from '@auth/core'
+import { CredentialsSignin } from '@auth/core/errors'
 import Credentials from '@auth/core/providers/credentials'
 import { defineEventHandler, getRequestURL, sendWebResponse } from 'h3'
 import { DomainError } from '#shared/errors'

@@ -1,0 +1,35 @@
+import { z } from 'zod'
+
+/** An id as the server gives it. */
+export const idSchema = z.string().uuid('This link does not name anything here. Go back and choose it from the list.')
+
+/** An instant with its offset, ISO 8601. */
+export const instantSchema = z.string().datetime({ offset: true, message: 'Enter a date and time.' }).transform(text => new Date(text))
+
+/** A calendar day. */
+export const daySchema = z.string().regex(/^\d{4}-\d{2}-\d{2}$/, 'Enter a date such as 2027-05-04.')
+  .refine(text => !Number.isNaN(Date.parse(`${text}T12:00:00Z`)) && new Date(`${text}T12:00:00Z`).toISOString().startsWith(text), 'There is no such day. Check the month and the day.')
+
+/** A wall-clock time. */
+export const timeSchema = z.string().regex(/^([01]\d|2[0-3]):[0-5]\d$/, 'Enter a time such as 09:30.')
+
+/** One line of text that must not be empty. */
+export const lineSchema = (label: string, longest = 120) => z.string({ required_error: `Enter ${label}.` }).trim().min(1, `Enter ${label}.`).max(longest, `Enter at most ${longest} characters.`)
+
+/** Free text that may be empty. */
+export const textSchema = (longest = 2000) => z.string().trim().max(longest, `Enter at most ${longest} characters.`)
+
+/** A finite number within limits, with its unit in the sentence. */
+export const quantitySchema = (label: string, unit: string, limits: { above?: number, least?: number, most?: number }) => {
+  const sentence = `Enter ${label} ${describe(limits)} ${unit}`.trim()
+  return z.number({ required_error: `${sentence}.`, invalid_type_error: `${sentence}, as a number.` }).finite(`${sentence}.`)
+    .refine(value => (limits.above === undefined || value > limits.above) && (limits.least === undefined || value >= limits.least) && (limits.most === undefined || value <= limits.most), `${sentence}.`)
+}
+
+function describe({ above, least, most }: { above?: number, least?: number, most?: number }): string {
+  if (least !== undefined && most !== undefined) return `from ${least} to ${most}`
+  if (above !== undefined && most !== undefined) return `above ${above} and up to ${most}`
+  if (above !== undefined) return `above ${above}`
+  if (least !== undefined) return `of ${least} or more`
+  return most === undefined ? '' : `up to ${most}`
+}

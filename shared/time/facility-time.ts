@@ -1,0 +1,72 @@
+import { TZDate, tzOffset } from '@date-fns/tz'
+import { DomainError } from '#shared/errors'
+
+/** A wall-clock day and time as read off a facility's clock. */
+export interface WallTime {
+  /** `YYYY-MM-DD` */
+  readonly date: string
+  /** `HH:MM` */
+  readonly time: string
+}
+
+const MS_PER_MINUTE = 60_000
+const pad = (value: number) => String(value).padStart(2, '0')
+
+/** Wall-clock day and time of an instant in a zone. */
+export function wallTimeOf(instant: Date, timeZone: string): WallTime {
+  const local = new TZDate(instant.getTime(), timeZone)
+  return { date: `${local.getFullYear()}-${pad(local.getMonth() + 1)}-${pad(local.getDate())}`, time: `${pad(local.getHours())}:${pad(local.getMinutes())}` }
+}
+
+/**
+ * The instant of a wall-clock time.
+ *
+ * @param wall day and time as typed
+ * @param timeZone IANA zone
+ * @param fold which of the two, where the clock is put back over this time
+ * @throws DomainError when the clock is put forward over this time, naming the next one that exists
+ */
+export function instantOfWallTime(wall: WallTime, timeZone: string, fold: 'first' | 'second' = 'first'): Date {
+  const naive = Date.parse(`${wall.date}T${wall.time}:00Z`)
+  if (Number.isNaN(naive)) throw new DomainError('invalid', 'This is not a date and time. Enter a date such as 2027-05-04 and a time such as 09:30.', ['time'])
+  // The offset on either side of any change near this time; a valid instant is one whose own offset leads back to it.
+  const candidates = [-24, 24].map(hours => naive - tzOffset(timeZone, new Date(naive + hours * 60 * MS_PER_MINUTE)) * MS_PER_MINUTE)
+    .filter(instant => naive - tzOffset(timeZone, new Date(instant)) * MS_PER_MINUTE === instant)
+    .sort((a, b) => a - b)
+  const chosen = fold === 'first' ? candidates[0] : candidates.at(-1)
+  if (chosen === undefined) {
+    const after = naive - tzOffset(timeZone, new Date(naive - 24 * 60 * MS_PER_MINUTE)) * MS_PER_MINUTE
+    throw new DomainError('invalid', `On ${wall.date} the clock is put forward over ${wall.time}, so this time does not exist. The next one that does is ${wallTimeOf(new Date(after), timeZone).time}.`, ['time'])
+  }
+  return new Date(chosen)
+}
+
+/** The instant at which a day starts in a zone, also where the clock is changed at midnight. */
+export function startOfDay(date: string, timeZone: string): Date {
+  for (const time of ['00:00', '00:30', '01:00']) {
+    try {
+      return instantOfWallTime({ date, time }, timeZone)
+    }
+    catch (error) {
+      if (!(error instanceof DomainError) || time === '01:00') throw error
+    }
+  }
+  throw new DomainError('invalid', 'This is not a date. Enter a date such as 2027-05-04.', ['date'])
+}
+
+/** The day so many days later (or earlier), as a calendar counts. */
+export function addDays(date: string, days: number): string {
+  const at = new Date(`${date}T12:00:00Z`)
+  at.setUTCDate(at.getUTCDate() + days)
+  return at.toISOString().slice(0, 10)
+}
+
+/** Monday of the week of a day. */
+export function mondayOf(date: string): string {
+  return addDays(date, -((new Date(`${date}T12:00:00Z`).getUTCDay() + 6) % 7))
+}
+
+/** Whole days from one day to another. */
+export function daysBetween(from: string, to: string): number {
+  return Math.round((Date.parse(`${to}T12:00:00Z`) - Date.parse(`${from}T12:00:00Z`)) / 86_400_000)
+}
