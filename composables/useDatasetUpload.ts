@@ -51,11 +51,12 @@ export function useDatasetUpload(runId: string) {
     requests.set(key, request)
     request.upload.addEventListener('progress', event => item.sentShare = event.lengthComputable ? event.loaded / event.total : 0)
     request.upload.addEventListener('load', () => Object.assign(item, { state: 'reading', sentShare: 1 }))
+    request.addEventListener('abort', () => Object.assign(item, { state: 'cancelled', message: 'Cancelled; nothing was kept.' }))
     request.open('POST', `/api/runs/${runId}/datasets`)
     request.responseType = 'json'
     await new Promise<void>((resolve) => {
       request.addEventListener('loadend', () => {
-        Object.assign(item, outcomeOf(request, item))
+        if (item.state !== 'cancelled') Object.assign(item, outcomeOf(request))
         resolve()
       })
       request.send(form)
@@ -74,16 +75,12 @@ export function useDatasetUpload(runId: string) {
   return { items, busy, add, retry: send, cancel }
 }
 
-function outcomeOf(request: XMLHttpRequest, item: UploadItem): Partial<UploadItem> {
+function outcomeOf(request: XMLHttpRequest): Partial<UploadItem> {
   if (request.status === 201) {
     const reply = request.response as UploadReply
     return { state: 'done', datasetId: reply.datasetId, message: reply.existed ? 'This file is on the run already; it was not added twice.' : '' }
   }
-  if (request.status === 0) {
-    return item.sentShare < 1 && request.readyState !== XMLHttpRequest.DONE
-      ? { state: 'cancelled', message: 'Cancelled; nothing was kept.' }
-      : { state: 'failed', message: 'The connection was lost. Press "Send again" when it is back.' }
-  }
+  if (request.status === 0) return { state: 'failed', message: 'The connection was lost. Press "Send again" when it is back.' }
   const body = request.response as { message?: string } | null
   return { state: 'failed', message: body?.message ?? 'The server did not take this file. Press "Send again".' }
 }

@@ -1,8 +1,9 @@
 import { z } from 'zod'
+import { idSchema } from '#shared/schemas/common'
 
-export const datasetParams = z.object({ datasetId: z.string().uuid('This is not the address of a dataset.') }).strict()
-export const analysisParams = z.object({ analysisId: z.string().uuid('This is not the address of an analysis.') }).strict()
-export const runDatasetParams = z.object({ runId: z.string().uuid('This is not the address of a run.') }).strict()
+export const datasetParams = z.object({ datasetId: idSchema }).strict()
+export const analysisParams = z.object({ analysisId: idSchema }).strict()
+export const runDatasetParams = z.object({ runId: idSchema }).strict()
 
 /** What an uploaded table holds. */
 export const datasetRoleSchema = z.enum(['measurement', 'addenda', 'copper-standard'], { message: 'Say what the file holds: a measurement, addenda or the copper standard.' })
@@ -11,7 +12,7 @@ export const datasetRoleSchema = z.enum(['measurement', 'addenda', 'copper-stand
 export const resultListQuery = z.object({
   verdict: z.enum(['ok', 'caution', 'fail', 'none']).optional(),
   signed: z.enum(['yes', 'no']).optional(),
-  runId: z.string().uuid().optional(),
+  runId: idSchema.optional(),
   search: z.string().trim().max(80, 'Search for at most 80 characters.').optional(),
   cursor: z.string().max(80).optional(),
 }).strict()
