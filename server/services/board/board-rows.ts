@@ -2,6 +2,7 @@ import { sql } from 'drizzle-orm'
 import type { Board, BoardClosure, BoardLane, BoardRun, DueReading, WaitingRequest } from '#shared/types/board'
 import type { PhaseId } from '#shared/planning/types'
 import type { Database } from '#server/db/client'
+import { facilityDayRange, type DayRange } from '#server/db/day-range'
 import { isoInstant } from '#server/db/iso-instant'
 import { sharedRead } from '#server/utils/shared-read'
 
@@ -28,12 +29,6 @@ export interface BoardRows extends Pick<Board, 'facilityName' | 'timeZone' | 'fr
   readings: ReadingRow[]
 }
 
-/** Range as asked for: days of the facility, or null for two weeks from this week's Monday. */
-export interface BoardRange { from: string | null, to: string | null, now: Date }
-
-/** Days shown when nobody says how many. */
-const USUAL_DAYS = 14
-
 const startsAt = isoInstant(sql`lower(run.slot)`)
 const endsAt = isoInstant(sql`upper(run.slot)`)
 
@@ -41,24 +36,17 @@ const endsAt = isoInstant(sql`upper(run.slot)`)
  * Reads the board in one round trip: the database builds the JSON, so that a request costs one statement whatever it shows.
  * People who ask at the same moment share it.
  */
-export const readBoardRows = sharedRead<BoardRange, BoardRows>(({ from, to }) => `${from}/${to}`, loadBoardRows)
+export const readBoardRows = sharedRead<DayRange, BoardRows>(({ from, to }) => `${from}/${to}`, loadBoardRows)
 
-async function loadBoardRows(db: Database, { from, to, now }: BoardRange): Promise<BoardRows> {
+async function loadBoardRows(db: Database, range: DayRange): Promise<BoardRows> {
   const { rows } = await db.execute(sql`
-    with range as (
-      select facility.name, facility.time_zone, days.first_day, days.last_day,
-        tstzrange(days.first_day::timestamp at time zone facility.time_zone, days.last_day::timestamp at time zone facility.time_zone) as span
-      from facilities facility
-      cross join lateral (select coalesce(${from}::date, date_trunc('week', ${now.toISOString()}::timestamptz at time zone facility.time_zone)::date) as first_day) beginning
-      cross join lateral (select beginning.first_day, coalesce(${to}::date, beginning.first_day + ${USUAL_DAYS}::int) as last_day) days
-      limit 1
-    )
+    with range as (${facilityDayRange(range)})
     select json_build_object(
       'facilityName', range.name, 'timeZone', range.time_zone, 'from', range.first_day, 'to', range.last_day,
       'lanes', (
         select coalesce(json_agg(json_build_object('id', id, 'slug', slug, 'name', name, 'kind', kind, 'baseTemperatureK', base_temperature_k,
           'maximumFieldT', maximum_field_t, 'usesLiquid', uses_liquid) order by position, name), '[]')
-        from cryostats where retired_at is null or retired_at > lower(range.span)),
+        from cryostats where retired_at is null or retired_at > range.from_at),
       'runs', (
         select coalesce(json_agg(json_build_object('id', run.id, 'number', run.number, 'title', run.title, 'cryostatId', run.cryostat_id, 'state', run.state,
           'groupId', run.group_id, 'groupName', team.name, 'ownerId', run.requested_by, 'startsAt', ${startsAt}, 'endsAt', ${endsAt},
@@ -69,11 +57,11 @@ async function loadBoardRows(db: Database, { from, to, now }: BoardRange): Promi
             from run_entries entry where entry.run_id = run.id and entry.kind = 'phase' and entry.phase is not null)
         ) order by lower(run.slot), run.number), '[]')
         from runs run join groups team on team.id = run.group_id
-        where run.slot && range.span and run.state in ('asked', 'approved', 'confirmed', 'running', 'finished', 'settled')),
+        where run.slot && tstzrange(range.from_at, range.to_at) and run.state in ('asked', 'approved', 'confirmed', 'running', 'finished', 'settled')),
       'closures', (
         select coalesce(json_agg(json_build_object('id', id, 'cryostatId', cryostat_id, 'startsAt', ${isoInstant(sql`lower(during)`)}, 'endsAt', ${isoInstant(sql`upper(during)`)},
           'reason', reason) order by lower(during)), '[]')
-        from closures where during && range.span),
+        from closures where during && tstzrange(range.from_at, range.to_at)),
       'requests', (
         select coalesce(json_agg(json_build_object('id', run.id, 'number', run.number, 'title', run.title, 'groupName', team.name, 'cryostatName', cryostat.name,
           'startsAt', ${startsAt}, 'endsAt', ${endsAt}) order by lower(run.slot), run.number), '[]')
