@@ -398,6 +398,7 @@ CREATE TABLE "runs" (
 	"started_at" timestamp with time zone,
 	"finished_at" timestamp with time zone,
 	"cut_short" boolean DEFAULT false NOT NULL,
+	"operator_hours" double precision,
 	"client_key" uuid,
 	"created_at" timestamp with time zone DEFAULT now() NOT NULL,
 	CONSTRAINT "runs_number_unique" UNIQUE("number"),

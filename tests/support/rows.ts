@@ -1,6 +1,8 @@
 import type { RunEstimate } from '#shared/planning/types'
+import type { GroupClass } from '#shared/pricing/rate-card'
+import type { RunState } from '#shared/runs/states'
 import type { Database } from '#server/db/client'
-import { cryostats, groupMemberships, groups, people, rateCardPrices, rateCards, runs, type GroupClass, type RunState } from '#server/db/schema'
+import { cryostats, groupMemberships, groups, people, rateCardPrices, rateCards, runs } from '#server/db/schema'
 
 /** Ids of a small facility that tests build on. */
 export interface TestFacility { personId: string, groupId: string, cryostatId: string, rateCardId: string }
@@ -46,7 +48,7 @@ export async function insertTestRun(db: Database, facility: TestFacility, state:
     slot: { startsAt: new Date(startsAt), endsAt: new Date(endsAt) },
     planInput: { temperatureLowK: 2, temperatureHighK: 10, points: 40, nitrogenPrecool: true, sweeps: 0 },
     estimate: testEstimate,
-    quote: { lines: [], lowMinor: 1, likelyMinor: 2, highMinor: 3, vatBasisPoints: 2500, reverseCharge: false, depositMinor: 1, lockedUntil: '2027-01-01T00:00:00Z' },
+    quote: { lines: [], netMinor: 100_000, vatMinor: 25_000, totalMinor: { low: 100_000, likely: 125_000, high: 150_000 }, vatBasisPoints: 2500, reverseCharge: false, depositMinor: 37_500, lockedUntil: '2027-01-01T00:00:00Z' },
     rateCardId: facility.rateCardId,
   }).returning()
   return run!

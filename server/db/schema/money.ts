@@ -1,8 +1,9 @@
 import { sql } from 'drizzle-orm'
 import { type AnyPgColumn, bigint, boolean, check, date, doublePrecision, index, integer, jsonb, pgTable, primaryKey, text, uniqueIndex, uuid } from 'drizzle-orm/pg-core'
 import { createdAt, id, instant } from '../columns'
-import { type GroupClass, groups, people } from './people'
+import { groups, people } from './people'
 import { runs } from './runs'
+import type { GroupClass } from '#shared/pricing/rate-card'
 
 /** A rate card; once issued it never changes (trigger). */
 export const rateCards = pgTable('rate_cards', {

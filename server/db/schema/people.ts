@@ -1,9 +1,7 @@
 import { sql } from 'drizzle-orm'
 import { bigint, boolean, check, index, integer, jsonb, pgTable, primaryKey, text, uniqueIndex, uuid } from 'drizzle-orm/pg-core'
 import { createdAt, id, instant } from '../columns'
-
-export const GROUP_CLASSES = ['internal', 'academic', 'industry'] as const
-export type GroupClass = (typeof GROUP_CLASSES)[number]
+import type { GroupClass } from '#shared/pricing/rate-card'
 
 /** A person who signs in. Invitations, resets and second factors will refer to this row. */
 export const people = pgTable('people', {

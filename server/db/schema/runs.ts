@@ -6,9 +6,8 @@ import { rateCards } from './money'
 import { groups, people } from './people'
 import { samples } from './samples'
 import type { PhaseId, RunEstimate } from '#shared/planning/types'
-
-export const RUN_STATES = ['draft', 'asked', 'approved', 'confirmed', 'running', 'finished', 'settled', 'declined', 'withdrawn', 'lapsed'] as const
-export type RunState = (typeof RUN_STATES)[number]
+import type { Quote } from '#shared/pricing/quote'
+import type { RunState } from '#shared/runs/states'
 
 /** What was asked of planning, kept with the run. */
 export interface RunPlanInput {
@@ -19,20 +18,8 @@ export interface RunPlanInput {
   sweeps: number
 }
 
-/** One quoted line; amounts in minor units. */
-export interface QuoteLineRecord { kind: string, label: string, unit: string, quantity: number, lowQuantity: number, highQuantity: number, unitPriceMinor: number, netMinor: number }
-
-/** The quote as offered, locked to its rate card. */
-export interface QuoteRecord {
-  lines: QuoteLineRecord[]
-  lowMinor: number
-  likelyMinor: number
-  highMinor: number
-  vatBasisPoints: number
-  reverseCharge: boolean
-  depositMinor: number
-  lockedUntil: string
-}
+/** The quote as offered, locked to its rate card until an instant (ISO 8601). */
+export type QuoteRecord = Quote & { lockedUntil: string }
 
 /** The run: one visit of one or more samples to one cryostat, from plan to bill. */
 export const runs = pgTable('runs', {
@@ -57,6 +44,8 @@ export const runs = pgTable('runs', {
   startedAt: instant('started_at'),
   finishedAt: instant('finished_at'),
   cutShort: boolean('cut_short').notNull().default(false),
+  /** Hours of an operator, as entered when the run was finished. */
+  operatorHours: doublePrecision('operator_hours'),
   /** The browser's key of the request, so that pressing twice asks once. */
   clientKey: uuid('client_key').unique(),
   createdAt: createdAt(),

@@ -1,5 +1,6 @@
 import type { Database } from '#server/db/client'
-import { type GroupClass, groupMemberships, groups, people } from '#server/db/schema'
+import type { GroupClass } from '#shared/pricing/rate-card'
+import { groupMemberships, groups, people } from '#server/db/schema'
 import { hashPassword } from '#server/services/people/password'
 
 /** One password for all demo accounts, printed by `npm run demo`; a facility's own people set theirs. */
