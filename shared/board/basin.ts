@@ -21,8 +21,8 @@ export interface BasinFrame {
   readonly floorY: number
 }
 
-/** A corner of the basin: place along time, depth from 0 (rim) to 1. */
-interface Corner { readonly x: number, readonly depth: number }
+/** A corner of the basin: instant, depth from 0 (rim) to 1. */
+interface Corner { readonly atMs: number, readonly depth: number }
 
 const coordinate = (value: number) => String(Math.round(value * 10) / 10)
 
@@ -30,15 +30,29 @@ const coordinate = (value: number) => String(Math.round(value * 10) / 10)
  * Corners of a run's basin over time. Phases that together are longer than the slot are drawn in together to fit it; where
  * they are shorter, the rest of the slot stays at the rim.
  */
-function corners(run: BasinRun, frame: BasinFrame): Corner[] {
+function corners(run: BasinRun): Corner[] {
   const totalMs = run.phases.reduce((sum, { hours }) => sum + hours, 0) * MS_PER_HOUR
   const roomMs = run.endMs - run.phasesStartMs
   const shrink = totalMs > roomMs && totalMs > 0 ? roomMs / totalMs : 1
   const inside = temperatureProfile(run.phases, run.lowestK).map(({ hour, temperatureK }) => ({
-    x: frame.x(run.phasesStartMs + hour * MS_PER_HOUR * shrink),
+    atMs: run.phasesStartMs + hour * MS_PER_HOUR * shrink,
     depth: basinDepth(temperatureK),
   }))
-  return [{ x: frame.x(run.startMs), depth: 0 }, ...inside, { x: frame.x(run.endMs), depth: 0 }]
+  return [{ atMs: run.startMs, depth: 0 }, ...inside, { atMs: run.endMs, depth: 0 }]
+}
+
+/**
+ * The time a run spends on its floor, where its words find room.
+ *
+ * @param run slot, phases and floor of the run
+ * @returns from reaching the lowest temperature to leaving it, ms UTC; the whole slot where it never leaves the rim
+ */
+export function floorSpan(run: BasinRun): { startMs: number, endMs: number } {
+  const all = corners(run)
+  const deepest = Math.max(...all.map(({ depth }) => depth))
+  if (deepest === 0) return { startMs: run.startMs, endMs: run.endMs }
+  const onFloor = all.filter(({ depth }) => depth === deepest)
+  return { startMs: onFloor[0]?.atMs ?? run.startMs, endMs: onFloor.at(-1)?.atMs ?? run.endMs }
 }
 
 /** Slope of the outline where two stretches meet, so that it never swings over (harmonic mean, Fritsch and Butland 1984). */
@@ -55,7 +69,7 @@ function meetingSlope(before: number, after: number): number {
  * @returns a closed SVG path, its top edge along the rim
  */
 export function basinPath(run: BasinRun, frame: BasinFrame): string {
-  const points = corners(run, frame)
+  const points = corners(run).map(({ atMs, depth }) => ({ x: frame.x(atMs), depth }))
   const y = (depth: number) => frame.rimY + depth * (frame.floorY - frame.rimY)
   const secant = (index: number) => {
     const [from, to] = [points[index], points[index + 1]]

@@ -14,5 +14,10 @@ export const boardQuery = z.object({ from: daySchema.optional(), to: daySchema.o
   if (days < 1 || days > MOST_BOARD_DAYS) context.addIssue({ code: 'custom', path: ['to'], message: `The board shows 1 to ${MOST_BOARD_DAYS} days. Choose a last day after the first.` })
 })
 
+/** The same for the board, with the helium strip of the same days where it is asked for: one request for the whole page. */
+export const boardWithHeliumQuery = z.object({ from: z.string().optional(), to: z.string().optional(), helium: z.literal('yes').optional() }).strict()
+  .transform(({ helium, ...range }) => ({ range, withHelium: helium === 'yes' }))
+  .pipe(z.object({ range: boardQuery, withHelium: z.boolean() }))
+
 /** A month of the calendar. */
 export const boardMonthQuery = z.object({ month: z.string().regex(/^\d{4}-(0[1-9]|1[0-2])$/, 'Enter a month such as 2027-05.') }).strict()

@@ -1,4 +1,5 @@
 import type { CryostatKind, PhaseId } from '#shared/planning/types'
+import type { HeliumForecastReply } from '#shared/types/helium-forecast'
 
 /** States a run has on the board; `taken` stands for every holding state of a run the viewer may not see into. */
 export const BOARD_RUN_STATES = ['asked', 'approved', 'confirmed', 'running', 'finished', 'settled', 'taken'] as const
@@ -72,6 +73,8 @@ export interface Board {
   closures: BoardClosure[]
   /** For people with a facility role. */
   desk: BoardDesk | null
+  /** Where it was asked for: the helium strip of the same days. */
+  helium: HeliumForecastReply | null
 }
 
 /** Which cryostats are free on each day of a month. */

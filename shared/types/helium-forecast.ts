@@ -18,7 +18,7 @@ export interface HeliumForecastReply {
   timeZone: string
   reserveLitres: number
   history: StockPoint[]
-  /** The likely stock with the runs that hold their days; the only line people without a facility role see. */
+  /** The likely stock with the runs that hold their days, for people without a facility role; empty where `detail` has it. */
   line: StockPoint[]
   /** For people with a facility role. */
   detail: {

@@ -4,22 +4,26 @@ import { levelReadingDueMs } from '#shared/helium/reading-due'
 import type { Board, BoardDesk, BoardRun } from '#shared/types/board'
 import type { Database } from '#server/db/client'
 import { authorise } from '#server/services/access/authorise'
+import { readHeliumForecast } from '#server/services/helium/forecast-queries'
 import { readBoardRows, type BoardRows, type BoardRunRow } from './board-rows'
 
 /** What is asked of the board: days of the facility (both or neither), and who asks. */
-export interface BoardQuery { actor: Actor, from?: string, to?: string, now: Date }
+export interface BoardQuery { actor: Actor, from?: string, to?: string, withHelium?: boolean, now: Date }
 
 /**
  * The board as the viewer may see it: runs of other groups show only that the days are taken or asked for.
  *
  * @param db database
- * @param query first day and the day after the last, `YYYY-MM-DD` (without them two weeks from this week's Monday), and who asks
+ * @param query first day and the day after the last, `YYYY-MM-DD` (without them two weeks from this week's Monday), whether with the helium strip, and who asks
  * @returns lanes, runs, closures, and for people of the facility what waits for them
  * @throws DomainError when the actor may not read the board
  */
-export async function readBoard(db: Database, { actor, from, to, now }: BoardQuery): Promise<Board> {
+export async function readBoard(db: Database, { actor, from, to, withHelium, now }: BoardQuery): Promise<Board> {
   authorise(actor, 'board:read')
-  const { lanes, closures, ...rows } = await readBoardRows(db, { from: from ?? null, to: to ?? null, now })
+  const [{ lanes, closures, ...rows }, helium] = await Promise.all([
+    readBoardRows(db, { from: from ?? null, to: to ?? null, now }),
+    withHelium ? readHeliumForecast(db, { actor, from, to, now }) : null,
+  ])
   return {
     facilityName: rows.facilityName,
     timeZone: rows.timeZone,
@@ -30,6 +34,7 @@ export async function readBoard(db: Database, { actor, from, to, now }: BoardQue
     runs: rows.runs.map(run => can(actor, 'run:read', { groupId: run.groupId, ownerId: run.ownerId }) ? openRun(run) : closedRun(run)),
     closures,
     desk: hasFacilityRole(actor) ? deskOf(actor, rows) : null,
+    helium,
   }
 }
 

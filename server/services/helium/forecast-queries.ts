@@ -54,17 +54,18 @@ export async function readHeliumForecast(db: Database, { actor, from, to, now }:
   const until = new Date(rows.toAt)
   const input = until > now ? toForecastInput(rows, { now, until }) : undefined
   const held = input && forecastStock({ ...input, mode: 'held' })
-  const shown = { from: Date.parse(rows.fromAt) }
+  const fromMs = Date.parse(rows.fromAt)
+  const mayReadDetail = can(actor, 'helium:read')
   return {
     timeZone: rows.timeZone,
     reserveLitres: rows.reserveLitres,
     history: historyOf(rows, now),
-    line: held ? fromDay(held.points, shown.from).map(toStockPoint) : [],
-    detail: input && held && can(actor, 'helium:read')
+    line: held && !mayReadDetail ? fromDay(held.points, fromMs).map(toStockPoint) : [],
+    detail: input && held && mayReadDetail
       ? {
           onHandLitres: round(input.stockLitres),
-          held: toStockForecast(held, rows, shown.from),
-          allAsked: toStockForecast(forecastStock({ ...input, mode: 'all-asked' }), rows, shown.from),
+          held: toStockForecast(held, rows, fromMs),
+          allAsked: toStockForecast(forecastStock({ ...input, mode: 'all-asked' }), rows, fromMs),
           askedCount: input.runs.filter(run => !run.held).length,
           deliveries: rows.deliveries.map(delivery => ({ ...delivery, isOverdue: Date.parse(delivery.dueAt) < now.getTime() })),
         }

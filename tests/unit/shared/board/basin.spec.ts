@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { basinPath, blockPath, temperatureTicks, type BasinRun } from '#shared/board/basin'
+import { basinPath, blockPath, floorSpan, temperatureTicks, type BasinRun } from '#shared/board/basin'
 
 const HOUR = 3_600_000
 // One unit an hour; rim at 0, deepest floor at 100.
@@ -44,6 +44,13 @@ describe('basinPath', () => {
 
   it('starts cooling late where a run was started late', () => {
     expect(basinPath({ ...run, endMs: 60 * HOUR, phasesStartMs: 6 * HOUR }, frame)).toMatch(/^M0 0L6 0L10 0C/)
+  })
+})
+
+describe('floorSpan', () => {
+  it('is the time at the lowest temperature', () => {
+    expect(floorSpan(run)).toEqual({ startMs: 24 * HOUR, endMs: 40 * HOUR })
+    expect(floorSpan({ ...run, phases: [{ phase: 'prepare', hours: 4 }] })).toEqual({ startMs: 0, endMs: 48 * HOUR })
   })
 })
 
