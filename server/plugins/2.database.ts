@@ -1,7 +1,7 @@
 import { openDatabase } from '#server/db/client'
 import { applyMigrations } from '#server/db/migrate'
 import { useServerConfig } from '#server/utils/config'
-import { setDatabaseOpening, setOpenDatabase } from '#server/utils/database'
+import { endDatabaseUsers, setDatabaseOpening, setOpenDatabase } from '#server/utils/database'
 import { log } from '#server/utils/log'
 
 /** Opens and migrates the database before the first answer; closes it last. */
@@ -22,6 +22,7 @@ export default defineNitroPlugin((nitro) => {
 
   nitro.hooks.hook('close', async () => {
     const database = await opening
+    await endDatabaseUsers()
     setOpenDatabase(undefined)
     await database.close()
   })

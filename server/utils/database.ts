@@ -2,6 +2,17 @@ import type { Database, OpenDatabase } from '#server/db/client'
 
 let opened: OpenDatabase | undefined
 let opening: Promise<OpenDatabase> | undefined
+const beforeClosing: (() => Promise<void>)[] = []
+
+/** Registers work that must end before the database closes: Nitro runs its close hooks in order of registration, the database's first. */
+export function beforeDatabaseCloses(work: () => Promise<void>) {
+  beforeClosing.push(work)
+}
+
+/** Ends what needs the database, the latest first. */
+export async function endDatabaseUsers() {
+  for (const work of beforeClosing.toReversed()) await work()
+}
 
 /** Called once by the database plugin, when it starts opening. */
 export function setDatabaseOpening(promise: Promise<OpenDatabase>) {

@@ -5,7 +5,9 @@ import { forecastRun } from '#shared/planning/forecast-run'
 import type { HeliumForecastReply, StockForecast, StockPoint } from '#shared/types/helium-forecast'
 import { heliumLitresFromMg } from '#shared/units/helium-units'
 import type { Database } from '#server/db/client'
+import type { DayRange } from '#server/db/day-range'
 import { authorise } from '#server/services/access/authorise'
+import { sharedRead } from '#server/utils/shared-read'
 import { readStockRows, type StockRows, type StockRowsInRange } from './forecast-rows'
 
 /** A storage dewar loses about one per cent of what it holds in a day (common practice, no source). */
@@ -50,28 +52,32 @@ export function toForecastInput(rows: StockRows, span: { now: Date, until: Date 
  */
 export async function readHeliumForecast(db: Database, { actor, from, to, now }: HeliumForecastQuery): Promise<HeliumForecastReply> {
   authorise(actor, 'board:read')
-  const rows = await readStockRows(db, { from: from ?? null, to: to ?? null, now })
-  const until = new Date(rows.toAt)
-  const input = until > now ? toForecastInput(rows, { now, until }) : undefined
+  const strip = await readStrip(db, { from: from ?? null, to: to ?? null, now })
+  return can(actor, 'helium:read') ? { ...strip, line: [] } : { ...strip, detail: null }
+}
+
+/** The whole strip; forecasts are the same for everybody, so people who ask at the same moment share them. */
+const readStrip = sharedRead<DayRange, HeliumForecastReply>(({ from, to }) => `${from}/${to}`, async (db, range) => {
+  const rows = await readStockRows(db, range)
+  const [fromMs, until] = [Date.parse(rows.fromAt), new Date(rows.toAt)]
+  const input = until > range.now ? toForecastInput(rows, { now: range.now, until }) : undefined
   const held = input && forecastStock({ ...input, mode: 'held' })
-  const fromMs = Date.parse(rows.fromAt)
-  const mayReadDetail = can(actor, 'helium:read')
   return {
     timeZone: rows.timeZone,
     reserveLitres: rows.reserveLitres,
-    history: historyOf(rows, now),
-    line: held && !mayReadDetail ? fromDay(held.points, fromMs).map(toStockPoint) : [],
-    detail: input && held && mayReadDetail
+    history: historyOf(rows, range.now),
+    line: held ? fromDay(held.points, fromMs).map(toStockPoint) : [],
+    detail: input && held
       ? {
           onHandLitres: round(input.stockLitres),
           held: toStockForecast(held, rows, fromMs),
           allAsked: toStockForecast(forecastStock({ ...input, mode: 'all-asked' }), rows, fromMs),
           askedCount: input.runs.filter(run => !run.held).length,
-          deliveries: rows.deliveries.map(delivery => ({ ...delivery, isOverdue: Date.parse(delivery.dueAt) < now.getTime() })),
+          deliveries: rows.deliveries.map(delivery => ({ ...delivery, isOverdue: Date.parse(delivery.dueAt) < range.now.getTime() })),
         }
       : null,
   }
-}
+})
 
 /** Stock by the books from the start of the range until now (or its end): each change is a step with two points. */
 function historyOf({ stockMg, changes, fromAt, toAt }: StockRowsInRange, now: Date): StockPoint[] {

@@ -3,7 +3,6 @@ import type { RunEstimate } from '#shared/planning/types'
 import type { Database } from '#server/db/client'
 import { facilityDayRange, type DayRange } from '#server/db/day-range'
 import { isoInstant } from '#server/db/iso-instant'
-import { sharedRead } from '#server/utils/shared-read'
 
 /** What the books and the plans say of the stock in the storage dewars. */
 export interface StockRows {
@@ -22,10 +21,14 @@ export interface StockRows {
 /** A range with the instants at which it starts and ends. */
 export interface StockRowsInRange extends StockRows { fromAt: string, toAt: string }
 
-/** Reads stock, its recent changes, plans and deliveries in one round trip, shared by people who ask at the same moment. */
-export const readStockRows = sharedRead<DayRange, StockRowsInRange>(({ from, to }) => `${from}/${to}`, loadStockRows)
-
-async function loadStockRows(db: Database, range: DayRange): Promise<StockRowsInRange> {
+/**
+ * Reads stock, its recent changes, plans and deliveries in one round trip.
+ *
+ * @param db database or transaction
+ * @param range days of the history and the forecast
+ * @throws Error when the facility has not been set up
+ */
+export async function readStockRows(db: Database, range: DayRange): Promise<StockRowsInRange> {
   const { rows } = await db.execute(sql`
     with range as (${facilityDayRange(range)})
     select json_build_object(

@@ -2,7 +2,7 @@ import { eq } from 'drizzle-orm'
 import { DomainError } from '#shared/errors'
 import type { Payments } from '#server/adapters/payments/client'
 import type { Database } from '#server/db/client'
-import { facilities, groups, payments, runs } from '#server/db/schema'
+import { groups, payments, runs } from '#server/db/schema'
 import { useServerConfig } from '#server/utils/config'
 import { findRunRecipients } from '#server/services/mail/recipients'
 
@@ -24,12 +24,11 @@ export async function openCheckout(db: Database, provider: Payments, input: { pa
   const [row] = await db.select({ run: runs, group: groups }).from(runs).innerJoin(groups, eq(groups.id, runs.groupId)).where(eq(runs.id, payment.runId))
   const { run, group } = row!
   const recipients = await findRunRecipients(db, run)
-  const [facility] = await db.select({ currency: facilities.currency }).from(facilities)
   const number = String(run.number).padStart(4, '0')
   const page = `${useServerConfig().origin}/runs/${run.id}`
   const untilPayBy = payment.kind === 'deposit' && run.payBy ? run.payBy.getTime() - now.getTime() : LONGEST_MS
   const checkout = await provider.createCheckout({
-    amountMinor: payment.amountMinor, currency: facility!.currency, title: `${payment.kind === 'deposit' ? 'Deposit' : 'Balance'} for run ${number}`,
+    amountMinor: payment.amountMinor, currency: payment.currency, title: `${payment.kind === 'deposit' ? 'Deposit' : 'Balance'} for run ${number}`,
     customerId: group.paymentCustomerId, customerEmail: recipients.requester, metadata: { runId: run.id, paymentId: payment.id, kind: payment.kind },
     successUrl: `${page}?paid=checking`, cancelUrl: `${page}?paid=left`,
     // Whole minutes of the payment's own time, so that a retry sends the same body under the same key.

@@ -4,6 +4,7 @@ import { DomainError } from '#shared/errors'
 import type { Payments } from '#server/adapters/payments/client'
 import type { Database } from '#server/db/client'
 import { payments } from '#server/db/schema'
+import { readFacility } from '#server/services/facility/queries'
 import { lockRun } from '#server/services/runs/lock-run'
 import { openCheckout } from './open-checkout'
 
@@ -28,8 +29,9 @@ export async function startDeposit(db: Database, provider: Payments, input: { ru
     if (last?.state === 'open') return last
     const attempt = (last?.attempt ?? 0) + 1
     // Stored before anything is sent: a process that dies in between goes on with the same key.
+    const { currency } = await readFacility(tx)
     const [row] = await tx.insert(payments).values({
-      runId, kind: 'deposit', attempt, state: 'open', amountMinor: run.quote.depositMinor, currency: 'EUR', idempotencyKey: `deposit:${runId}:${attempt}`,
+      runId, kind: 'deposit', attempt, state: 'open', amountMinor: run.quote.depositMinor, currency, idempotencyKey: `deposit:${runId}:${attempt}`,
     }).returning()
     return row!
   })
