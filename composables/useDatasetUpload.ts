@@ -35,13 +35,13 @@ export function useDatasetUpload(runId: string) {
       items.value.push({ key, name: file.name, bytes: file.size, sentShare: 0, state: tooLarge ? 'failed' : 'waiting', message: tooLarge ? 'This file is larger than 50 MB. Split it, or leave out what is not needed.' : '', datasetId: null })
       return tooLarge ? null : key
     })
-    for (const key of added) if (key) await send(key)
+    for (const key of added) if (key && items.value.find(item => item.key === key)?.state === 'waiting') await send(key)
   }
 
   async function send(key: string) {
     const item = items.value.find(each => each.key === key)
     const chosen = files.get(key)
-    if (!item || !chosen || item.state === 'cancelled') return
+    if (!item || !chosen || item.state === 'done') return
     Object.assign(item, { state: 'sending', sentShare: 0, message: '' })
     const form = new FormData()
     form.append('role', chosen.role)
