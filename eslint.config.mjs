@@ -1,3 +1,4 @@
+import jsdoc from 'eslint-plugin-jsdoc'
 import withNuxt from './.nuxt/eslint.config.mjs'
 
 const ban = (regex, message) => ({ 'no-restricted-imports': ['error', { patterns: [{ regex, message }] }] })
@@ -19,6 +20,7 @@ export default withNuxt(
   },
   {
     files: ['shared/**/*.ts', 'server/services/**/*.ts'],
+    plugins: { jsdoc },
     rules: { 'jsdoc/require-jsdoc': ['error', { publicOnly: true, require: { FunctionDeclaration: true, ArrowFunctionExpression: true } }] },
   },
   { files: ['pages/**/*.vue', 'layouts/*.vue', 'error.vue', 'app.vue'], rules: { 'vue/multi-word-component-names': 'off' } },
