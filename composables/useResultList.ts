@@ -10,10 +10,11 @@ export function useResultList() {
   watch(data, () => more.value = [])
 
   const items = computed(() => [...data.value?.items ?? [], ...more.value.flatMap(page => page.items)])
+  const timeZone = computed(() => data.value?.timeZone ?? 'UTC')
   const nextCursor = computed(() => (more.value.at(-1) ?? data.value)?.nextCursor ?? null)
   async function loadMore() {
     if (nextCursor.value) more.value.push(await $fetch<ResultList>('/api/results', { query: { ...query.value, cursor: nextCursor.value } }))
   }
 
-  return { filters, items, nextCursor, loadMore, status, error, refresh }
+  return { filters, items, nextCursor, loadMore, timeZone, status, error, refresh }
 }

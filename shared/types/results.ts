@@ -44,7 +44,8 @@ export interface ResultListItem {
   } | null
 }
 
-export interface ResultList { items: ResultListItem[], nextCursor: string | null }
+/** A page of the list; instants are shown in the facility's zone. */
+export interface ResultList { timeZone: string, items: ResultListItem[], nextCursor: string | null }
 
 /** A saved analysis in the history of its dataset. */
 export interface AnalysisSummary {

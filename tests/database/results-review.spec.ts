@@ -7,7 +7,7 @@ import { getAnalysis } from '#server/services/results/get-analysis'
 import { listResults } from '#server/services/results/list-results'
 import { signOff } from '#server/services/results/sign-off'
 import { DRIVERS, openTestDatabase } from '../support/database'
-import { insertTestAnalysis, insertTestDataset } from '../support/results'
+import { insertFacilityRow, insertTestAnalysis, insertTestDataset } from '../support/results'
 import { insertTestFacility, insertTestRun, type TestFacility } from '../support/rows'
 
 const NOW = new Date('2027-01-10T08:00Z')
@@ -20,6 +20,7 @@ describe.each(DRIVERS)('reviewing results, on %s', (driver) => {
 
   beforeAll(async () => {
     open = await openTestDatabase(driver)
+    await insertFacilityRow(open.db)
     facility = await insertTestFacility(open.db)
     const other = await insertTestFacility(open.db)
     run = await insertTestRun(open.db, facility, 'finished', '2027-01-04T08:00Z', '2027-01-08T08:00Z')

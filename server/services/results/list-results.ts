@@ -7,6 +7,7 @@ import type { ResultList, ResultListItem } from '#shared/types/results'
 import type { Database } from '#server/db/client'
 import { analyses, cryostats, datasets, groups, runs, samples, signOffs } from '#server/db/schema'
 import { authorise } from '#server/services/access/authorise'
+import { readFacility } from '#server/services/facility/queries'
 
 const PAGE_SIZE = 50
 // A cursor carries milliseconds; the database keeps microseconds.
@@ -62,7 +63,9 @@ export async function listResults(db: Database, query: ResultListQuery & { actor
 
   const page = rows.slice(0, PAGE_SIZE)
   const last = page.at(-1)?.dataset
+  const { timeZone } = await readFacility(db)
   return {
+    timeZone,
     items: page.map(({ dataset, run, cryostatName, groupName, sample, mappedFormula, latest, accepted }): ResultListItem => ({
       datasetId: dataset.id, role: dataset.role, originalName: dataset.originalName, runId: run.id, runNumber: run.number, cryostatName, groupName,
       sampleName: sample?.name ?? null, formula: mappedFormula ?? sample?.formula ?? null,
