@@ -30,8 +30,8 @@ export interface LeastSquaresSolution {
   readonly conditionNumber: number
 }
 
-/** Above this condition number the solution is refined; below it plain QR is good to 1e-12 already. */
-const REFINE_ABOVE = 1e3
+/** Above this condition number the solution is refined; below it plain QR loses no more than about a digit. */
+const REFINE_ABOVE = 10
 const REFINEMENT_STEPS = 4
 
 /**
