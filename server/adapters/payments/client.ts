@@ -81,7 +81,7 @@ export function connectPayments(config: PaymentsConfig): Payments {
 function toCheckoutState(session: Stripe.Checkout.Session): CheckoutState {
   return {
     sessionId: session.id,
-    status: session.status === 'complete' || session.status === 'expired' ? session.status : 'open',
+    status: session.status === 'complete' ? 'complete' : session.status === 'expired' ? 'expired' : 'open',
     isPaid: session.payment_status === 'paid',
     url: session.url,
     intentId: idOf(session.payment_intent),

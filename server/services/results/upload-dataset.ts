@@ -1,11 +1,12 @@
 import { and, eq } from 'drizzle-orm'
 import type { Actor } from '#shared/access/rules'
 import { DomainError } from '#shared/errors'
+import type { RunState } from '#shared/runs/states'
 import { decodeTable } from '#shared/heat-capacity/decode-table'
 import type { DatasetRole } from '#shared/types/results'
 import { type FileStore, sha256Of } from '#server/adapters/storage/files'
 import type { Database } from '#server/db/client'
-import { datasets, runSamples, runs, type RunState } from '#server/db/schema'
+import { datasets, runSamples, runs } from '#server/db/schema'
 import { authorise } from '#server/services/access/authorise'
 import { writeAudit } from '#server/services/audit/write-audit'
 
