@@ -1,4 +1,5 @@
-import type { FitTerm, HeatCapacityCurve, LowTemperatureFit } from '#shared/heat-capacity/types'
+import { termValue } from '#shared/heat-capacity/terms'
+import type { HeatCapacityCurve, LowTemperatureFit } from '#shared/heat-capacity/types'
 
 /** Points ready to be drawn; all arrays have the same length. */
 export interface PlotSeries {
@@ -10,9 +11,6 @@ export interface PlotSeries {
   readonly index: readonly number[]
 }
 
-/** Power of T that each term of C has. */
-const TERM_POWER: Readonly<Record<FitTerm, number>> = { gamma: 1, beta3: 3, beta5: 5, tail: -2, constant: 0 }
-
 /**
  * The heat capacity of a fit at a temperature.
  *
@@ -21,7 +19,7 @@ const TERM_POWER: Readonly<Record<FitTerm, number>> = { gamma: 1, beta3: 3, beta
  * @returns mJ/(mol K)
  */
 export function fittedHeatCapacity(fit: Pick<LowTemperatureFit, 'model' | 'coefficients'>, temperatureK: number): number {
-  return fit.model.terms.reduce((sum, term) => sum + (fit.coefficients[term]?.value ?? 0) * temperatureK ** TERM_POWER[term], 0)
+  return fit.model.terms.reduce((sum, term) => sum + (fit.coefficients[term]?.value ?? 0) * termValue(term, temperatureK), 0)
 }
 
 /**

@@ -6,8 +6,9 @@ import { addComment } from '#server/services/results/add-comment'
 import { getAnalysis } from '#server/services/results/get-analysis'
 import { listResults } from '#server/services/results/list-results'
 import { signOff } from '#server/services/results/sign-off'
+import { insertFacilityRow } from '../support/board-rows'
 import { DRIVERS, openTestDatabase } from '../support/database'
-import { insertFacilityRow, insertTestAnalysis, insertTestDataset } from '../support/results'
+import { insertTestAnalysis, insertTestDataset } from '../support/results'
 import { insertTestFacility, insertTestRun, type TestFacility } from '../support/rows'
 
 const NOW = new Date('2027-01-10T08:00Z')

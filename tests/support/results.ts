@@ -1,16 +1,8 @@
 import type { HeatCapacityAnalysis, Verdict } from '#shared/heat-capacity/types'
 import type { Database } from '#server/db/client'
-import { analyses, datasets, facilities } from '#server/db/schema'
+import { analyses, datasets } from '#server/db/schema'
 
 let serial = 0
-
-/** The facility's own row, which every test database needs once. */
-export async function insertFacilityRow(db: Database) {
-  await db.insert(facilities).values({
-    name: 'Skerry Low-Temperature Facility', timeZone: 'Europe/Oslo', currency: 'EUR', addressLines: ['1 Quay'], email: 'desk@skerry.example', vatId: 'NO000000000MVA', bankAccount: 'NO00',
-    reserveLitres: 100, payByHours: 72, quoteLockDays: 14, paymentTermDays: 30, refundLadder: [],
-  })
-}
 
 /** A mapped dataset with two points, without a file behind it. */
 export async function insertTestDataset(db: Database, run: { id: string }, personId: string, more: Partial<typeof datasets.$inferInsert> = {}) {
