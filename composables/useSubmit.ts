@@ -1,22 +1,27 @@
 import type { FormContext } from 'vee-validate'
+import { ref } from 'vue'
+import { type Refusal, refusalSentence, refusedFields } from '#shared/utils/refusal-words'
 import { useToastsStore } from '~/stores/toasts'
 
-/** What the server says of a refusal. */
-interface Refusal { statusCode?: number, message?: string, data?: { code?: string, issues?: { path: (string | number)[], message: string }[] } }
-
 /** How a form is sent. */
-export interface SubmitOptions { method?: 'POST' | 'PUT' | 'DELETE', body?: Record<string, unknown>, form?: Pick<FormContext, 'setErrors'>, done?: string }
+export interface SubmitOptions {
+  method?: 'POST' | 'PUT' | 'DELETE'
+  body?: Record<string, unknown>
+  /** The form whose fields take what the server refuses. */
+  form?: Pick<FormContext, 'setErrors'>
+  /** Said in a toast when it is done. */
+  done?: string
+}
 
 /**
  * Sends a form: once at a time, with what the server refuses put at its fields, and a sentence for a lost connection or
  * an ended session. What was typed is never touched.
  *
- * @returns `submit`, which resolves with the reply or null when refused; `busy`; and `refusal`, the sentence to show
+ * @returns `submit`, which resolves with the reply or null when refused; `busy`; and `refusal`, the sentence to show (BaseRefusal)
  */
 export function useSubmit() {
   const busy = ref(false)
   const refusal = ref('')
-  const route = useRoute()
   const toasts = useToastsStore()
 
   async function submit<T = unknown>(url: string, { method = 'POST', body = {}, form, done }: SubmitOptions = {}): Promise<T | null> {
@@ -30,20 +35,13 @@ export function useSubmit() {
     }
     catch (error) {
       const { statusCode, data } = error as { statusCode?: number, data?: Refusal }
-      refusal.value = sentenceOf(statusCode, data)
-      const issues = data?.data?.issues ?? []
-      form?.setErrors(Object.fromEntries(issues.map(issue => [issue.path.join('.'), issue.message])))
+      refusal.value = refusalSentence(statusCode, data)
+      form?.setErrors(refusedFields(data))
       return null
     }
     finally {
       busy.value = false
     }
-  }
-
-  function sentenceOf(statusCode: number | undefined, data: Refusal | undefined): string {
-    if (statusCode === undefined) return 'The server did not answer. Check the connection and try again; what you typed is kept.'
-    if (statusCode === 401) return `Your session has ended. Sign in again in another tab (${location.origin}/sign-in?return=${encodeURIComponent(route.fullPath)}), then press the button once more; what you typed is kept.`
-    return data?.message ?? 'This could not be done. Try again.'
   }
 
   return { submit, busy, refusal }
