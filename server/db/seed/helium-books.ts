@@ -32,6 +32,14 @@ export class HeliumBooks {
     }
   }
 
+  /** Tops the dewars up before today where little is left, so that the coming week can be met. */
+  stockUp(leastLitres: number, at: Date) {
+    for (const id of this.facility.accounts.dewars) {
+      const stock = this.facility.accounts.dewars.reduce((sum, dewar) => sum + (this.balanceMg.get(dewar) ?? 0), 0)
+      if (stock < heliumMgFromLitres(leastLitres)) this.refill(this.account(id, 'dewar', 'Dewar'), at)
+    }
+  }
+
   private bookTransfer(entry: Entry, cryostat: Cryostat, vessel: HeliumAccount) {
     this.bookContent(entry, cryostat, vessel, entry.beforeLitres ?? 0)
     const takenMg = heliumMgFromLitres(entry.drawnLitres ?? 0)
@@ -50,7 +58,7 @@ export class HeliumBooks {
   private refill(dewar: HeliumAccount, at: Date) {
     const recoveredMg = this.balanceMg.get(this.facility.accounts.recovery) ?? 0
     const roomMg = heliumMgFromLitres(FULL_DEWAR_LITRES) - (this.balanceMg.get(dewar.accountId) ?? 0)
-    const liquefiedMg = Math.min(Math.round(recoveredMg * 0.8), Math.round(roomMg * 0.6))
+    const liquefiedMg = Math.min(Math.round(recoveredMg * 0.95), Math.round(roomMg * 0.8))
     if (liquefiedMg > heliumMgFromLitres(20)) this.book(liquefactionEntry({ recovery: this.gas().recovery, dewar, amountMg: liquefiedMg }), at, 'Liquefied')
     const amountMg = Math.min(heliumMgFromLitres(DELIVERY_LITRES), heliumMgFromLitres(FULL_DEWAR_LITRES) - (this.balanceMg.get(dewar.accountId) ?? 0))
     const movementId = this.book(deliveryEntry({ supplier: this.account(this.facility.accounts.supplier, 'supplier', 'Supplier'), dewar, amountMg }), at, 'Delivery')

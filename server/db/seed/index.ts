@@ -50,6 +50,7 @@ export async function seedDemo(db: Database, { seed, now, files, fonts }: SeedOp
   }
   const books = new HeliumBooks(facility)
   books.bookEntries([...past, ...running].flatMap(({ entries, cryostat }) => entries.map(entry => ({ entry, cryostat }))))
+  books.stockUp(210, new Date(now.getTime() - 26 * 3_600_000))
   await books.write(db, orderedHelium(now))
   await seedClosures(db, facility, people.managerId, now)
   await seedDeposits(db, [...past, ...running])
