@@ -70,6 +70,10 @@ export interface LowTemperatureFit {
   readonly residuals: readonly number[]
   /** Indices into the curve of the points used. */
   readonly usedIndices: readonly number[]
+  /** With `relative` weights, the share of C that was taken as σ, e.g. 0.01. */
+  readonly relativeSigma?: number
+  /** Relative uncertainty common to all points (the mass), already inside the standard errors and the covariance; absent when none was added. */
+  readonly commonRelativeUncertainty?: number
 }
 
 export type CheckStatus = 'ok' | 'caution' | 'fail' | 'not-applicable'
