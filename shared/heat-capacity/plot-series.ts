@@ -67,45 +67,16 @@ export function fitLine(fit: Pick<LowTemperatureFit, 'model' | 'coefficients'>, 
 }
 
 /**
- * Thins a long series for drawing: in each of `columns` slices of x the lowest and the highest point stay, so that no spike is lost.
- *
- * @param series with x rising
- * @param columns about one a pixel column
- * @returns the series itself when it is short enough
- */
-export function thinSeries(series: PlotSeries, columns: number): PlotSeries {
-  const length = series.x.length
-  if (length <= 2 * columns) return series
-  const first = series.x[0]!
-  const width = (series.x[length - 1]! - first) / columns || 1
-  const lowest = new Map<number, number>()
-  const highest = new Map<number, number>()
-  for (let each = 0; each < length; each += 1) {
-    const column = Math.min(columns - 1, Math.floor((series.x[each]! - first) / width))
-    const low = lowest.get(column)
-    const high = highest.get(column)
-    if (low === undefined || series.y[each]! < series.y[low]!) lowest.set(column, each)
-    if (high === undefined || series.y[each]! > series.y[high]!) highest.set(column, each)
-  }
-  const kept = [...new Set([...lowest.values(), ...highest.values()])].sort((a, b) => a - b)
-  return { x: kept.map(each => series.x[each]!), y: kept.map(each => series.y[each]!), error: series.error && kept.map(each => series.error![each]!), index: kept.map(each => series.index[each]!) }
-}
-
-/**
- * Moves one edge of the window by whole data points, never past the other edge.
+ * Where an edge of the window goes when it is moved by whole data points, so that each step takes in or leaves out one point.
  *
  * @param temperatureK rising, K
- * @param windowK lowest and highest temperature used, K
- * @param edge which one moves
+ * @param fromK where the edge is, K
  * @param steps points to move by; negative is colder
- * @returns the new window, whose moved edge lies on a data point
+ * @returns the temperature of a data point, K; `fromK` when there are none
  */
-export function moveWindowEdge(temperatureK: readonly number[], windowK: readonly [number, number], edge: 'low' | 'high', steps: number): [number, number] {
-  const [low, high] = windowK
-  if (temperatureK.length === 0) return [low, high]
-  const firstInside = temperatureK.findIndex(temperature => temperature >= low)
-  const current = edge === 'high' ? temperatureK.findLastIndex(temperature => temperature <= high) : firstInside < 0 ? temperatureK.length : firstInside
-  const bounded = Math.min(temperatureK.length - 1, Math.max(0, current + steps))
-  const moved = temperatureK[bounded]!
-  return edge === 'low' ? [Math.min(moved, high), high] : [low, Math.max(moved, low)]
+export function stepToPoint(temperatureK: readonly number[], fromK: number, steps: number): number {
+  const colder = temperatureK.findLastIndex(temperature => temperature <= fromK)
+  const isOnPoint = temperatureK[colder] === fromK
+  const start = steps < 0 && !isOnPoint ? colder + 1 : colder
+  return temperatureK[Math.min(temperatureK.length - 1, Math.max(0, start + steps))] ?? fromK
 }

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { directSeries, fitLine, fittedHeatCapacity, moveWindowEdge, reducedSeries, thinSeries } from '#shared/heat-capacity/plot-series'
+import { directSeries, fitLine, fittedHeatCapacity, reducedSeries, stepToPoint } from '#shared/heat-capacity/plot-series'
 
 const curve = { temperatureK: [1, 2, 4], heatCapacity: [3, 10, -1], sigma: [0.1, 0.2, 0.4] }
 const estimate = (value: number) => ({ value, standardError: 0.1, unit: '' })
@@ -26,22 +26,15 @@ describe('series of a heat-capacity plot', () => {
     ;[0.7, 1.1, 1.5].forEach((expected, index) => expect(line.y[index]).toBeCloseTo(expected, 12))
   })
 
-  it('thins a long series and keeps its spike', () => {
-    const x = Array.from({ length: 10_000 }, (_, index) => index)
-    const y = x.map(value => value === 7777 ? 99 : Math.sin(value / 500))
-    const thin = thinSeries({ x, y, index: x }, 100)
-    expect(thin.x.length).toBeLessThanOrEqual(200)
-    expect(thin.index).toContain(7777)
-    expect(thin.x).toEqual([...thin.x].sort((a, b) => a - b))
-    expect(thinSeries({ x: [1], y: [1], index: [0] }, 100).x).toEqual([1])
-  })
-
-  it('moves an edge of the window by data points, and never past the other', () => {
+  it('moves an edge from point to point, from between two as well, and never out of the data', () => {
     const temperatureK = [1, 2, 3, 5, 8]
-    expect(moveWindowEdge(temperatureK, [1.5, 6], 'high', 1)).toEqual([1.5, 8])
-    expect(moveWindowEdge(temperatureK, [1.5, 6], 'low', -1)).toEqual([1, 6])
-    expect(moveWindowEdge(temperatureK, [1.5, 6], 'low', 9)).toEqual([6, 6])
-    expect(moveWindowEdge(temperatureK, [1.5, 6], 'high', -9)).toEqual([1.5, 1.5])
-    expect(moveWindowEdge(temperatureK, [3.1, 3.2], 'high', 1)).toEqual([3.1, 5])
+    expect(stepToPoint(temperatureK, 3, 1)).toBe(5)
+    expect(stepToPoint(temperatureK, 3, -1)).toBe(2)
+    expect(stepToPoint(temperatureK, 4, 1)).toBe(5)
+    expect(stepToPoint(temperatureK, 4, -1)).toBe(3)
+    expect(stepToPoint(temperatureK, 3, -10)).toBe(1)
+    expect(stepToPoint(temperatureK, 3, 10)).toBe(8)
+    expect(stepToPoint(temperatureK, 0.5, 1)).toBe(1)
+    expect(stepToPoint([], 4, 1)).toBe(4)
   })
 })
