@@ -78,9 +78,9 @@ export interface LowTemperatureFit {
 
 export type CheckStatus = 'ok' | 'caution' | 'fail' | 'not-applicable'
 
-export type CheckId =
-  | 'scale' | 'electronic-term' | 'free-electron' | 'handbook' | 'debye-range' | 'zero-at-zero' | 'classical-share'
-  | 'transition' | 'upturn' | 'residuals' | 'coverage' | 'addenda' | 'repeat' | 'mass' | 'standard'
+export type CheckId
+  = | 'scale' | 'electronic-term' | 'free-electron' | 'handbook' | 'debye-range' | 'zero-at-zero' | 'classical-share'
+    | 'transition' | 'upturn' | 'residuals' | 'coverage' | 'addenda' | 'repeat' | 'mass' | 'standard'
 
 /** One thing a result must obey, with its number, the accepted band and where the band comes from. */
 export interface CheckResult {
