@@ -25,7 +25,7 @@ export interface NonlinearSolution extends LeastSquaresSolution {
 
 /** A weak start converges from one damping and not from another (BoxBOD of NIST from its far start): three are cheap. */
 const DAMPINGS = [1e-3, 1, 1e3]
-const MAXIMUM_STEPS = 2000
+const MAXIMUM_STEPS = 500
 /** A step this small, relative to each parameter, is the end. */
 const STEP_TOLERANCE = 1e-12
 /** Step of the central differences, the cube root of the machine precision. */
