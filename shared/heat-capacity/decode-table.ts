@@ -21,11 +21,21 @@ const KNOWN_FORMATS: readonly { bytes: readonly number[], sentence: string }[] =
  */
 export function decodeTable(bytes: Uint8Array): string {
   if (bytes.length === 0) throw new DomainError('invalid', 'The file is empty. Choose the file with the measured table.', ['file'])
-  const known = KNOWN_FORMATS.find(format => format.bytes.every((byte, index) => bytes[index] === byte))
-  if (known) throw new DomainError('invalid', known.sentence, ['file'])
+  refuseKnownFormat(bytes)
   const text = decodeText(bytes)
   if (/^\s*$/.test(text)) throw new DomainError('invalid', 'The file holds only blank lines. Choose the file with the measured table.', ['file'])
   return text
+}
+
+/**
+ * Refuses a file whose first bytes are those of a known format that is no text table.
+ *
+ * @param bytes the beginning of the file
+ * @throws DomainError `invalid` naming the format and what to do
+ */
+export function refuseKnownFormat(bytes: Uint8Array): void {
+  const known = KNOWN_FORMATS.find(format => format.bytes.every((byte, index) => bytes[index] === byte))
+  if (known) throw new DomainError('invalid', known.sentence, ['file'])
 }
 
 function decodeText(bytes: Uint8Array): string {

@@ -9,6 +9,8 @@ export interface HeatCapacityCurve {
   readonly heatCapacity: readonly number[]
   /** Standard uncertainty of each heat capacity, mJ/(mol K); undefined when the file states none. */
   readonly sigma?: readonly number[]
+  /** Line of the file that each point came from, from 1; tells up from down sweeps. Absent for computed curves. */
+  readonly rowNumbers?: readonly number[]
 }
 
 /** The sample facts that the fit and the checks need. */
@@ -26,6 +28,8 @@ export interface HeatCapacitySample {
   readonly massMg?: number
   readonly massUncertaintyMg?: number
   readonly densityGPerCm3?: number
+  /** Volume from the sample's dimensions, mm³. */
+  readonly volumeMm3?: number
 }
 
 /** Terms a low-temperature fit may hold: γT, β₃T³, β₅T⁵, A/T², and a constant (used by the zero-at-zero check only). */
