@@ -1,20 +1,23 @@
 import { defineStore } from 'pinia'
 
+/** The tab's own store; none on the server. */
+const storage = () => typeof sessionStorage === 'undefined' ? null : sessionStorage
+
 /** What was typed and not yet taken by the server, by form; survives a reload and a new sign-in in the same tab. */
 export const useDraftsStore = defineStore('drafts', () => {
   const keyOf = (form: string) => `holdtime-draft:${form}`
 
   function save(form: string, values: unknown) {
-    if (import.meta.client) sessionStorage.setItem(keyOf(form), JSON.stringify(values))
+    storage()?.setItem(keyOf(form), JSON.stringify(values))
   }
 
   function read<T>(form: string): Partial<T> | null {
-    const text = import.meta.client ? sessionStorage.getItem(keyOf(form)) : null
+    const text = storage()?.getItem(keyOf(form))
     return text ? JSON.parse(text) as Partial<T> : null
   }
 
   function forget(form: string) {
-    if (import.meta.client) sessionStorage.removeItem(keyOf(form))
+    storage()?.removeItem(keyOf(form))
   }
 
   return { save, read, forget }

@@ -1,4 +1,5 @@
 import { defineStore } from 'pinia'
+import { ref } from 'vue'
 
 /** One short message. */
 export interface Toast { id: number, text: string, tone: 'ok' | 'caution' | 'fail' }

@@ -4,14 +4,14 @@ import { z } from 'zod'
 export const idSchema = z.string().uuid('This link does not name anything here. Go back and choose it from the list.')
 
 /** An instant with its offset, ISO 8601. */
-export const instantSchema = z.string().datetime({ offset: true, message: 'Enter a date and time.' }).transform(text => new Date(text))
+export const instantSchema = z.string({ required_error: 'Enter a date and time.' }).datetime({ offset: true, message: 'Enter a date and time.' }).transform(text => new Date(text))
 
 /** A calendar day. */
-export const daySchema = z.string().regex(/^\d{4}-\d{2}-\d{2}$/, 'Enter a date such as 2027-05-04.')
+export const daySchema = z.string({ required_error: 'Enter a date such as 2027-05-04.' }).regex(/^\d{4}-\d{2}-\d{2}$/, 'Enter a date such as 2027-05-04.')
   .refine(text => !Number.isNaN(Date.parse(`${text}T12:00:00Z`)) && new Date(`${text}T12:00:00Z`).toISOString().startsWith(text), 'There is no such day. Check the month and the day.')
 
 /** A wall-clock time. */
-export const timeSchema = z.string().regex(/^([01]\d|2[0-3]):[0-5]\d$/, 'Enter a time such as 09:30.')
+export const timeSchema = z.string({ required_error: 'Enter a time such as 09:30.' }).regex(/^([01]\d|2[0-3]):[0-5]\d$/, 'Enter a time such as 09:30.')
 
 /** One line of text that must not be empty. */
 export const lineSchema = (label: string, longest = 120) => z.string({ required_error: `Enter ${label}.` }).trim().min(1, `Enter ${label}.`).max(longest, `Enter at most ${longest} characters.`)
