@@ -1,16 +1,14 @@
-import type { SessionPerson } from '../shared/types/session'
-
-/** The module's own types come from next-auth, which is not installed; this is the shape our session route sends. */
+// The sign-in module takes its types from next-auth, which is not installed; these are the shapes our session route sends.
 declare module 'next-auth' {
-  interface Session {
+  import type { SessionPerson } from '#shared/types/session'
+
+  export interface Session {
     user: SessionPerson
     expires: string
   }
 }
 
-declare module 'next-auth/react' {
-  interface SignInOptions extends Record<string, unknown> {
-    callbackUrl?: string
-    redirect?: boolean
-  }
+declare module 'next-auth/providers/index' {
+  export type BuiltInProviderType = string
+  export type AppProvider = { id: string, type: string }
 }
