@@ -1,6 +1,9 @@
 import { describe, expect, it } from 'vitest'
 import { DomainError } from '#shared/errors'
-import { BCS_JUMP_RATIO, DEBYE_T3_CONSTANT_J_PER_MOL_K, GAMMA_MJ_PER_MOL_K2_PER_STATE_PER_EV } from '#shared/materials/constants'
+import {
+  AVOGADRO_CONSTANT_PER_MOL, BCS_JUMP_RATIO, BOHR_MAGNETON_J_PER_T, BOLTZMANN_CONSTANT_J_PER_K, DEBYE_T3_CONSTANT_J_PER_MOL_K, ELECTRON_MASS_KG,
+  ELEMENTARY_CHARGE_C, GAMMA_MJ_PER_MOL_K2_PER_STATE_PER_EV, GAS_CONSTANT_J_PER_MOL_K, PLANCK_CONSTANT_J_S, REDUCED_PLANCK_CONSTANT_J_S,
+} from '#shared/materials/constants'
 import { COPPER_REFERENCE_RANGE_K, copperReferenceHeatCapacity } from '#shared/materials/copper-reference'
 import { handbookEntry } from '#shared/materials/elements'
 import { densityOfStatesPerEV, freeElectronGas, kadowakiWoodsRatio, wilsonRatio } from '#shared/materials/free-electron'
@@ -10,6 +13,14 @@ import { referenceJson, referenceTable, relativeDifference } from '../../../supp
 const metals = referenceTable('materials/d_elements_metals.csv')
 
 describe('constants', () => {
+  const table = new Map(referenceTable('materials/a_constants.csv').map(row => [row.symbol!, row['CODATA 2022']!]))
+  it.each<[string, number]>([
+    ['k_B', BOLTZMANN_CONSTANT_J_PER_K], ['N_A', AVOGADRO_CONSTANT_PER_MOL], ['h', PLANCK_CONSTANT_J_S], ['e', ELEMENTARY_CHARGE_C],
+    ['R = k_B N_A', GAS_CONSTANT_J_PER_MOL_K], ['hbar = h/2pi', REDUCED_PLANCK_CONSTANT_J_S], ['m_e', ELECTRON_MASS_KG], ['mu_B', BOHR_MAGNETON_J_PER_T],
+  ])('%s is that of CODATA 2022', (symbol, value) => {
+    // The table prints ten digits.
+    expect(relativeDifference(value, Number.parseFloat(table.get(symbol)!))).toBeLessThan(1e-9)
+  })
   it('derive the three prefactors of the field', () => {
     expect(DEBYE_T3_CONSTANT_J_PER_MOL_K).toBeCloseTo(1943.7701905692, 9)
     expect(GAMMA_MJ_PER_MOL_K2_PER_STATE_PER_EV).toBeCloseTo(2.35714101437, 10)
@@ -29,6 +40,16 @@ describe('free electrons', () => {
     expect(relativeDifference(gas.fermiEnergyEV, Number(row['E_F eV']))).toBeLessThan(6e-4)
     expect(relativeDifference(gas.fermiTemperatureK, Number(row['T_F K']))).toBeLessThan(6e-5)
     expect(relativeDifference(gas.carrierDensityPerM3, Number(row['n_e 1e28/m3']) * 1e28)).toBeLessThan(6e-4)
+  })
+
+  it('gives the alkali metals with the density of the cold crystal', () => {
+    const masses = new Map(metals.map(row => [row.symbol!, Number(row['standard atomic weight (periodictable 1.6.0)'])]))
+    const rows = referenceTable('materials/d_alkali_low_T_density.csv')
+    expect(rows).toHaveLength(5)
+    for (const row of rows) {
+      const { gamma0 } = freeElectronGas({ electronsPerFormulaUnit: 1, molarMassGPerMol: masses.get(row.symbol!)!, densityGPerCm3: Number(row['density low T g/cm3']) })
+      expect(relativeDifference(gamma0, Number(row['gamma_free low T computed'])), row.symbol).toBeLessThan(2e-4)
+    }
   })
 
   it('counts electrons per formula unit: two formula units of one electron are one of two', () => {
