@@ -31,8 +31,9 @@ export async function readHeliumBalances(db: Database) {
     kind: heliumAccounts.kind,
     name: heliumAccounts.name,
     capacityLitres: heliumAccounts.capacityLitres,
-    balanceMg: sql<number>`coalesce((select sum(${heliumPostings.amountMg}) from ${heliumPostings} where ${heliumPostings.accountId} = ${heliumAccounts.id}), 0)::float8`,
-  }).from(heliumAccounts).orderBy(heliumAccounts.kind, heliumAccounts.name)
+    balanceMg: sql<number>`coalesce(sum(${heliumPostings.amountMg}), 0)::float8`,
+  }).from(heliumAccounts).leftJoin(heliumPostings, eq(heliumPostings.accountId, heliumAccounts.id))
+    .groupBy(heliumAccounts.id).orderBy(heliumAccounts.kind, heliumAccounts.name)
 }
 
 /**
