@@ -1,5 +1,6 @@
 import { z } from 'zod'
 import { idSchema } from '#shared/schemas/common'
+import { analysisSampleSchema, columnMappingSchema, fitModelSchema } from '#shared/schemas/heat-capacity'
 
 export const datasetParams = z.object({ datasetId: idSchema }).strict()
 export const analysisParams = z.object({ analysisId: idSchema }).strict()
@@ -17,6 +18,27 @@ export const resultListQuery = z.object({
   cursor: z.string().max(80).optional(),
 }).strict()
 export type ResultListQuery = z.infer<typeof resultListQuery>
+
+/** Optional numbers of a form are null while empty. */
+const withoutNulls = (value: unknown) => value && typeof value === 'object' ? Object.fromEntries(Object.entries(value).filter(([, each]) => each !== null)) : value
+
+/** How the columns of an uploaded table are read, the facts of its sample, and the rows that are put back. */
+export const mapDatasetSchema = z.object({
+  columns: columnMappingSchema,
+  sampleId: idSchema.nullish(),
+  sample: z.preprocess(withoutNulls, analysisSampleSchema),
+  restoredRows: z.array(z.number().int().positive()).max(10_000, 'At most 10 000 rows can be put back; mend the file instead.').default([]),
+}).strict()
+export type MapDatasetInput = z.infer<typeof mapDatasetSchema>
+
+/** What an analysis is made with; the server computes the numbers itself. */
+export const saveAnalysisSchema = z.object({
+  model: fitModelSchema,
+  addendaDatasetId: idSchema.nullish(),
+  /** The conversion a person accepted, by the id under which it was suggested. */
+  correctionId: z.string().max(60).nullish(),
+}).strict()
+export type SaveAnalysisInput = z.infer<typeof saveAnalysisSchema>
 
 /** A signature, or a refusal to sign; the service asks for the reason where it must not be empty. */
 export const signOffSchema = z.object({

@@ -1,4 +1,6 @@
-import type { CorrectionSuggestion, HeatCapacityAnalysis, HeatCapacitySample, Verdict } from '#shared/heat-capacity/types'
+import type { SuggestedMapping } from '#shared/heat-capacity/table/head'
+import type { CorrectionSuggestion, HeatCapacityAnalysis, HeatCapacitySample, MaterialKind, Verdict } from '#shared/heat-capacity/types'
+import type { ColumnMapping } from '#shared/schemas/heat-capacity'
 
 /** What an uploaded table holds. */
 export type DatasetRole = 'measurement' | 'addenda' | 'copper-standard'
@@ -12,6 +14,18 @@ export interface RejectedRow {
   restored?: boolean
   /** Whether the row holds numbers that could stand in the curve. */
   restorable?: boolean
+}
+
+/** How a table was read: its columns and units, and the sample facts that the conversion rests on. */
+export interface DatasetMapping {
+  columns: ColumnMapping
+  sample: HeatCapacitySample
+  /** Heads in the order of the file; files with the same heads are offered the same columns. */
+  heads: string[]
+  /** E.g. `molar mass 63.546 g/mol`. */
+  conversionUses: string[]
+  /** Line of the file of each point of the curve. */
+  rowNumbers?: readonly number[]
 }
 
 /** Who signed an analysis, or said why not. */
@@ -66,7 +80,7 @@ export interface AnalysisLineage {
   originalName: string
   fileSha256: string
   /** The columns, units and sample facts as they stood. */
-  mapping: Record<string, unknown>
+  mapping: Omit<DatasetMapping, 'rowNumbers'>
   /** SHA-256 of the curve that was fitted, so that a later mapping can be told apart. */
   curveSha256: string
   addenda: { datasetId: string, fileSha256: string } | null
@@ -107,3 +121,65 @@ export interface CopperReading {
   temperatureRangeK: readonly [number, number]
   pointCount: number
 }
+
+/** The beginning of a table, for choosing its columns. */
+export interface TablePreview {
+  heads: string[]
+  /** What the heads say, and what was chosen for the last table with the same heads. */
+  suggested: SuggestedMapping
+  remembered: { columns: ColumnMapping, from: string } | null
+  delimiter: string
+  decimal: string
+  rows: { row: number, cells: string[] }[]
+}
+
+/** Sample facts that a run brings along, for filling the form. */
+export interface SampleChoice {
+  id: string
+  name: string
+  formula: string
+  kind: MaterialKind
+  massMg: number | null
+  massUncertaintyMg: number | null
+  densityGPerCm3: number | null
+  conductionElectrons: number | null
+  criticalTemperatureK: number | null
+}
+
+/** A curve as the browser gets it. */
+export interface CurvePoints {
+  temperatureK: number[]
+  heatCapacity: number[]
+  sigma: number[] | null
+  rowNumbers: number[] | null
+}
+
+/** Everything a result page needs of a dataset, but the points of long tables. */
+export interface DatasetView {
+  id: string
+  role: DatasetRole
+  originalName: string
+  bytes: number
+  sha256: string
+  uploadedAt: string
+  uploadedByName: string
+  timeZone: string
+  run: { id: string, number: number, title: string, cryostatName: string, startsAt: string, endsAt: string, groupName: string }
+  sampleId: string | null
+  sampleName: string | null
+  sampleChoices: SampleChoice[]
+  mapping: Omit<DatasetMapping, 'rowNumbers'> | null
+  rejectedRows: RejectedRow[]
+  pointCount: number | null
+  analyses: AnalysisSummary[]
+  /** Mapped addenda tables of the same cryostat, newest first. */
+  addendaChoices: { id: string, originalName: string, runNumber: number, uploadedAt: string }[]
+  /** The newest reading of the copper standard on this cryostat before this dataset. */
+  copperStandard: CopperReading | null
+  /** Thresholds that the manager tuned. */
+  checkThresholds: Record<string, number>
+  may: { map: boolean, analyse: boolean, sign: boolean }
+}
+
+/** What came of confirming the columns. */
+export interface MappingReply { pointCount: number, rejectedRows: RejectedRow[], conversionUses: string[] }

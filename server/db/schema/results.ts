@@ -5,7 +5,7 @@ import { people } from './people'
 import { runs } from './runs'
 import { samples } from './samples'
 import type { HeatCapacitySample, Verdict } from '#shared/heat-capacity/types'
-import type { RejectedRow, StoredAnalysis } from '#shared/types/results'
+import type { DatasetMapping, RejectedRow, StoredAnalysis } from '#shared/types/results'
 
 /** One uploaded table: the raw file as it came, how its columns were read, and the curve that came of it. */
 export const datasets = pgTable('datasets', {
@@ -19,7 +19,7 @@ export const datasets = pgTable('datasets', {
   sha256: text('sha256').notNull(),
   uploadedBy: uuid('uploaded_by').notNull().references(() => people.id),
   /** Null until the columns are confirmed. */
-  mapping: jsonb('mapping').$type<Record<string, unknown>>(),
+  mapping: jsonb('mapping').$type<DatasetMapping>(),
   rowCount: integer('row_count'),
   rejectedRows: jsonb('rejected_rows').$type<RejectedRow[]>().notNull().default([]),
   temperatureK: doublePrecision('temperature_k').array(),

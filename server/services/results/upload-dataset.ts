@@ -2,13 +2,13 @@ import { and, eq } from 'drizzle-orm'
 import type { Actor } from '#shared/access/rules'
 import { DomainError } from '#shared/errors'
 import type { RunState } from '#shared/runs/states'
-import { decodeTable } from '#shared/heat-capacity/decode-table'
 import type { DatasetRole } from '#shared/types/results'
 import { type FileStore, sha256Of } from '#server/adapters/storage/files'
 import type { Database } from '#server/db/client'
 import { datasets, runSamples, runs } from '#server/db/schema'
 import { authorise } from '#server/services/access/authorise'
 import { writeAudit } from '#server/services/audit/write-audit'
+import { readTableStart } from './preview-table'
 
 const STATES_WITH_RESULTS: readonly RunState[] = ['running', 'finished', 'settled']
 
@@ -38,7 +38,7 @@ export async function uploadDataset(db: Database, files: FileStore, upload: Data
     throw new DomainError('conflict', `Run ${run.number} is ${run.state}: it has not been measured yet. Add results once it is running.`, ['file'])
   }
   if (!file) throw new DomainError('invalid', 'Choose a file with the measured table.', ['file'])
-  decodeTable(file.content)
+  readTableStart(file.content)
 
   const sha256 = sha256Of(file.content)
   const sameFile = and(eq(datasets.runId, runId), eq(datasets.sha256, sha256), eq(datasets.role, role))
