@@ -12,9 +12,11 @@ export function standaloneSvg(drawing: SVGSVGElement): { markup: string, width: 
   const originals = drawing.querySelectorAll<SVGElement>('*')
   copy.querySelectorAll<SVGElement>('*').forEach((element, index) => {
     const style = getComputedStyle(originals[index]!)
+    if (element.closest('defs')) return
     for (const property of KEPT) element.style.setProperty(property, style.getPropertyValue(property))
     for (const attribute of ['class', 'tabindex', 'role']) element.removeAttribute(attribute)
   })
+  copy.querySelectorAll('[fill="transparent"]').forEach(target => target.remove())
   const ground = document.createElementNS('http://www.w3.org/2000/svg', 'rect')
   for (const [name, value] of Object.entries({ width: '100%', height: '100%', fill: getComputedStyle(drawing).getPropertyValue('--color-surface').trim() })) ground.setAttribute(name, value)
   copy.prepend(ground)
