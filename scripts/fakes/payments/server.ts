@@ -10,7 +10,7 @@ import { PaymentsStore } from './store'
 import { Webhooks } from './webhooks'
 
 /** How the fake is started. */
-export interface PaymentsFakeOptions { port: number, webhookUrl: string, webhookSecret: string, apiKey?: string }
+export interface PaymentsFakeOptions { port: number, host?: string, webhookUrl: string, webhookSecret: string, apiKey?: string }
 
 /** A running fake. */
 export interface PaymentsFake { url: string, port: number, store: PaymentsStore, close(): Promise<void> }
@@ -25,7 +25,7 @@ export async function startPaymentsFake(options: PaymentsFakeOptions): Promise<P
       response.writeHead(500).end(String(error))
     })
   })
-  await new Promise<void>((resolve, reject) => server.once('error', reject).listen(options.port, '127.0.0.1', resolve))
+  await new Promise<void>((resolve, reject) => server.once('error', reject).listen(options.port, options.host ?? '127.0.0.1', resolve))
   return {
     url, port: options.port, store,
     close: () => new Promise((resolve) => {
