@@ -109,7 +109,7 @@ function repeatsOf({ temperatureK, rowNumbers }: HeatCapacityCurve): MappedTable
   for (let index = 1; index < temperatureK.length; index += 1) {
     if (temperatureK[index] !== temperatureK[index - 1]) continue
     const last = repeats.at(-1)
-    if (last?.temperatureK === temperatureK[index]) last.rows.push(rowNumbers![index]!)
+    if (last && last.temperatureK === temperatureK[index]) last.rows.push(rowNumbers![index]!)
     else repeats.push({ temperatureK: temperatureK[index]!, rows: [rowNumbers![index - 1]!, rowNumbers![index]!] })
   }
   return repeats

@@ -107,7 +107,8 @@ export interface CheckResult {
 
 /** A single conversion that would bring scale, handbook and debye-range into band. */
 export interface CorrectionSuggestion {
-  readonly id: 'divide-by-1000' | 'multiply-by-1000' | 'per-gram-to-per-mole' | 'per-mole-to-per-gram' | 'per-atom-to-per-formula-unit' | 'mass-unit-milligram-gram' | 'addenda-forgotten'
+  readonly id: 'divide-by-1000' | 'multiply-by-1000' | 'per-gram-to-per-mole' | 'per-mole-to-per-gram' | 'per-atom-to-per-formula-unit' | 'per-formula-unit-to-per-atom' | 'calorie-to-joule' | 'mass-unit-milligram-gram' | 'addenda-forgotten'
+  /** Multiply every heat capacity by it; 1 where no conversion can mend it. */
   readonly factor: number
   readonly message: string
 }

@@ -36,7 +36,8 @@ function readUnit(quantity: KnownQuantity, unitText: string): ColumnHead | undef
   }
   if (quantity === 'sigma' && /^(%|per ?cent)$/.test(unitText)) return { quantity, unit: '%' }
   const unit = parseHeatCapacityUnit(unitText)
-  return unit && { quantity, unit }
+  if (!unit) return undefined
+  return quantity === 'sigma' ? { quantity, unit } : { quantity, unit }
 }
 
 /** Every way to cut a head into a symbol and what may be its unit, the surest first. */
