@@ -1,11 +1,14 @@
 // Seeds an invented facility into an empty database: `npm run seed`, also run by the demo and the tests.
 import { readFile, writeFile } from 'node:fs/promises'
 import { join } from 'node:path'
+import { eq } from 'drizzle-orm'
 import { openFileStore } from '#server/adapters/storage/files'
 import { openDatabase } from '#server/db/client'
 import { applyMigrations } from '#server/db/migrate'
-import { facilities } from '#server/db/schema'
+import { facilities, payments } from '#server/db/schema'
 import { seedDemo } from '#server/db/seed'
+import { addPastPayments, saveState } from './fakes/payments/state'
+import { PaymentsStore } from './fakes/payments/store'
 
 const dataFolder = process.env.HOLDTIME_DATA ?? '.data'
 const start = performance.now()
@@ -27,6 +30,10 @@ try {
       files: openFileStore({ dataFolder }),
       fonts: { regular: await font('400Regular'), medium: await font('500Medium'), semiBold: await font('600SemiBold') },
     })
+    const deposits = await open.db.select().from(payments).where(eq(payments.kind, 'deposit'))
+    const store = new PaymentsStore()
+    addPastPayments(store, deposits.flatMap(({ intentId, amountMinor, currency, runId }) => intentId ? [{ intentId, amountMinor, currency, runId }] : []))
+    saveState(join(dataFolder, 'payments-fake.json'), store)
     await writeFile(join(dataFolder, 'demo-sign-ins.json'), JSON.stringify(signIns, null, 2))
     process.stdout.write(`  ${runCount} runs of two years in ${((performance.now() - start) / 1000).toFixed(1)} s\n`)
   }

@@ -1,23 +1,24 @@
 // Runs the local fakes for the demo and for docker-compose.fake.yml.
+import { join } from 'node:path'
 import { startMailFake } from './mail'
 import { startPaymentsFake } from './payments/server'
-import { FAKE_PORTS } from './ports'
+import { fakePort } from './ports'
 
-// Loopback, but for a container whose ports are mapped to loopback outside.
-const host = process.env.FAKES_HOST
-const portOf = (variable: string, usual: number) => Number(process.env[variable] ?? usual)
-
+// Loopback, unless they run in a container and the container's ports are mapped to loopback.
+const host = process.env.FAKES_HOST ?? '127.0.0.1'
 const payments = await startPaymentsFake({
+  port: fakePort('payments'),
   host,
-  port: portOf('PAYMENTS_FAKE_PORT', FAKE_PORTS.payments),
+  publicUrl: process.env.PAYMENTS_FAKE_URL,
   webhookUrl: process.env.PAYMENTS_WEBHOOK_URL ?? 'http://127.0.0.1:3000/api/payments/webhook',
+  stateFile: process.env.HOLDTIME_DATA ? join(process.env.HOLDTIME_DATA, 'payments-fake.json') : undefined,
   webhookSecret: process.env.PAYMENTS_WEBHOOK_SECRET?.split(',')[0] ?? 'whsec_local_fake',
 })
-const mail = await startMailFake({ host, smtpPort: portOf('MAIL_FAKE_SMTP_PORT', FAKE_PORTS.mailSmtp), webPort: portOf('MAIL_FAKE_WEB_PORT', FAKE_PORTS.mailWeb) })
+const mail = await startMailFake({ smtpPort: fakePort('mailSmtp'), webPort: fakePort('mailWeb'), host })
 
 const stop = async () => {
   await Promise.all([payments.close(), mail.close()])
   process.exit(0)
 }
-process.on('SIGINT', stop)
-process.on('SIGTERM', stop)
+process.on('SIGINT', () => void stop())
+process.on('SIGTERM', () => void stop())

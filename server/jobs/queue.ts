@@ -19,7 +19,7 @@ export type JobName = keyof JobPayloads
 export type JobHandlers = { [Name in JobName]: (payload: JobPayloads[Name], open: OpenDatabase) => Promise<void> }
 
 // Of the same job with the same payload only one waits at a time ("short" policy).
-const RETRY = { retryLimit: 8, retryDelay: 2, retryBackoff: true, expireInSeconds: 120 }
+const RETRY = { retryLimit: 8, retryDelay: 2, retryBackoff: true, expireInSeconds: 60 }
 const POLL_S = 1
 
 /** The durable queue: jobs live in the database, in the transaction that caused them. */
@@ -34,9 +34,12 @@ let boss: PgBoss | undefined
  * @param handlers what each job does
  */
 export async function startJobs(open: OpenDatabase, handlers: JobHandlers): Promise<JobQueue> {
-  const started = new PgBoss({ db: { executeSql: (text: string, values?: unknown[]) => open.query(text, values) }, schema: 'jobs' })
+  const started = new PgBoss({ db: { executeSql: (text: string, values?: unknown[]) => open.query(text, values) }, schema: 'jobs', maintenanceIntervalSeconds: 30 })
   started.on('error', error => log.error({ err: error }, 'job queue'))
   await started.start()
+  // The embedded database has one process: a job still marked active was cut off when the last one died. On a server it
+  // may be another process's, and comes back when its time is over.
+  if (open.driver === 'pglite') await open.query('update jobs.job set state = \'retry\', start_after = now() where state = \'active\'')
   for (const name of Object.keys(handlers) as JobName[]) await startWorker(started, name, handlers, open)
   boss = started
   return {

@@ -1,15 +1,14 @@
 import AxeBuilder from '@axe-core/playwright'
 import { type Browser, type BrowserContext, type Page, chromium } from 'playwright-core'
 import { expect, inject } from 'vitest'
+import { CHROMIUM } from '../../scripts/lib/chromium'
 import { demoSignIn } from './client'
-
-const FLAGS = ['--no-sandbox', '--disable-gpu', '--disable-quic', '--no-first-run', '--disable-background-networking', '--disable-component-update', '--disable-sync']
 
 let browser: Browser | undefined
 
 /** Debian's Chromium, started once a file. */
 export async function openBrowser(): Promise<Browser> {
-  browser ??= await chromium.launch({ executablePath: '/usr/bin/chromium', args: FLAGS })
+  browser ??= await chromium.launch(CHROMIUM)
   return browser
 }
 

@@ -59,7 +59,7 @@ export async function startServer(options: { databaseUrl?: string } = {}): Promi
   if (options.databaseUrl) await runToEnd(process.execPath, [...tsx, join(root, 'scripts/seed.ts')], { ...environment, ...tsxEnvironment })
   else cpSync(await seededFolder(), dataFolder, { recursive: true })
 
-  const payments = await startPaymentsFake({ port: paymentsPort, webhookUrl: `http://127.0.0.1:${port}/api/payments/webhook`, webhookSecret: WEBHOOK_SECRET, apiKey: PAYMENTS_KEY })
+  const payments = await startPaymentsFake({ port: paymentsPort, webhookUrl: `http://127.0.0.1:${port}/api/payments/webhook`, webhookSecret: WEBHOOK_SECRET, apiKey: PAYMENTS_KEY, stateFile: join(dataFolder, 'payments-fake.json') })
   const mail = await startMailFake({ smtpPort, webPort: mailPort })
   // From another folder, as an installed server would be.
   const spawnServer = () => spawn(process.execPath, [join(root, '.output/server/index.mjs')], { cwd: tmpdir(), env: { ...process.env, ...environment }, stdio: ['ignore', 'inherit', 'inherit'] })

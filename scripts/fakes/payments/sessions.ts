@@ -1,41 +1,56 @@
 import type Stripe from 'stripe'
-import { ApiError, invalid } from './errors'
-import { type FormValue, textAt, textsAt } from './form'
-import { confirmIntent, createCustomer, createIntent } from './objects'
-import type { CardChoice, PaymentsStore } from './store'
+import { find, invalid } from './errors'
+import { amountOf, type Form, onlyKnown, requiredText, textAt, textsAt } from './form'
+import { cancelIntent, confirmIntent, createCustomer, createIntent, idOf, refuseConfirmation } from './objects'
+import { type CardChoice, objectOf, type PaymentsStore } from './store'
 import type { Webhooks } from './webhooks'
 
 const SHORTEST_S = 30 * 60
 const LONGEST_S = 24 * 3600
+/** Clocks of the asker and the provider differ a little. */
+const CLOCK_S = 60
+const KNOWN = ['mode', 'line_items', 'customer', 'customer_email', 'customer_creation', 'client_reference_id', 'metadata', 'payment_intent_data', 'success_url', 'cancel_url', 'expires_at', 'payment_method_types', 'locale']
 
 /** Makes a hosted checkout session in payment mode. */
-export function createSession(store: PaymentsStore, form: Record<string, FormValue>, payPage: (id: string) => string): Stripe.Checkout.Session {
-  if (textAt(form, 'mode') !== 'payment') throw invalid('Only mode=payment is known here.', 'mode')
-  const successUrl = textAt(form, 'success_url')
-  if (!successUrl) throw invalid('Missing required param: success_url.', 'success_url')
-  const items = Array.isArray(form.line_items) ? form.line_items : []
-  if (items.length === 0) throw invalid('Missing required param: line_items.', 'line_items')
-  const amount = items.reduce<number>((sum, item) => sum + Number(textAt(item, 'price_data', 'unit_amount')) * Number(textAt(item, 'quantity') ?? 1), 0)
-  const currency = textAt(items[0], 'price_data', 'currency') ?? 'eur'
-  if (!Number.isInteger(amount) || amount < 50) throw new ApiError(400, { type: 'invalid_request_error', code: 'amount_too_small', message: 'The Checkout Session\'s total amount must be at least 50.', param: 'line_items' })
+export function createSession(store: PaymentsStore, form: Form, payPage: (id: string) => string): Stripe.Checkout.Session {
+  onlyKnown(form, KNOWN)
+  if (requiredText(form, 'mode') !== 'payment') throw invalid('Only mode=payment is known here.', 'mode')
+  const successUrl = requiredText(form, 'success_url')
+  const items = readItems(store, form)
+  const amount = items.reduce((sum, item) => sum + item.amount_total, 0)
+  const currency = items[0]!.currency
   const expiresAt = Number(textAt(form, 'expires_at') ?? store.nowS() + LONGEST_S)
-  if (expiresAt < store.nowS() + SHORTEST_S - 60 || expiresAt > store.nowS() + LONGEST_S + 60) throw invalid('The `expires_at` timestamp must be between 30 minutes and 24 hours from now.', 'expires_at')
-  const customer = textAt(form, 'customer') ?? createCustomer(store, { email: textAt(form, 'customer_email'), metadata: {} }).id
+  if (!(expiresAt >= store.nowS() + SHORTEST_S - CLOCK_S && expiresAt <= store.nowS() + LONGEST_S + CLOCK_S)) throw invalid('The `expires_at` timestamp must be between 30 minutes and 24 hours from now.', 'expires_at')
   const id = store.newId('cs_test')
-  const session = {
-    id, object: 'checkout.session', created: store.nowS(), livemode: false, mode: 'payment', status: 'open', payment_status: 'unpaid', amount_total: amount, amount_subtotal: amount, currency, customer,
+  const session = objectOf<Stripe.Checkout.Session>({
+    id, object: 'checkout.session', created: store.nowS(), livemode: false, mode: 'payment', status: 'open', payment_status: 'unpaid', amount_total: amount, amount_subtotal: amount, currency, customer: customerOf(store, form),
     customer_email: textAt(form, 'customer_email') ?? null, client_reference_id: textAt(form, 'client_reference_id') ?? null, metadata: textsAt(form, 'metadata'), success_url: successUrl, cancel_url: textAt(form, 'cancel_url') ?? null,
-    expires_at: expiresAt, payment_intent: null, url: payPage(id),
-    // Kept for the pay page and the intent; the real object does not show them.
-    fake: { title: items.map(item => textAt(item, 'price_data', 'product_data', 'name') ?? 'Payment').join(', '), savesCard: textAt(form, 'payment_intent_data', 'setup_future_usage') === 'off_session', intentMetadata: textsAt(form.payment_intent_data, 'metadata') },
-  } as unknown as Stripe.Checkout.Session
+    expires_at: expiresAt, payment_intent: null, setup_intent: null, url: payPage(id),
+  })
   store.sessions.set(id, session)
+  store.sessionFacts.set(id, {
+    title: items.map(item => item.description).join(', '), savesCard: textAt(form, 'payment_intent_data', 'setup_future_usage') === 'off_session', intentMetadata: textsAt(form.payment_intent_data, 'metadata'), items,
+  })
   return session
 }
 
-/** What only the fake knows of a session. */
-export function fakeFacts(session: Stripe.Checkout.Session): { title: string, savesCard: boolean, intentMetadata: Record<string, string> } {
-  return (session as unknown as { fake: { title: string, savesCard: boolean, intentMetadata: Record<string, string> } }).fake
+function readItems(store: PaymentsStore, form: Form): Stripe.LineItem[] {
+  const given = Array.isArray(form.line_items) ? form.line_items : []
+  if (given.length === 0) throw invalid('Missing required param: line_items.', 'line_items', 'parameter_missing')
+  return given.map((item, index) => {
+    const currency = textAt(item, 'price_data', 'currency')
+    if (!currency || !/^[a-z]{3}$/.test(currency)) throw invalid(`Invalid currency: ${currency ?? ''}`, `line_items[${index}][price_data][currency]`)
+    const quantity = Number(textAt(item, 'quantity') ?? 1)
+    if (!Number.isInteger(quantity) || quantity < 1) throw invalid('Invalid positive integer.', `line_items[${index}][quantity]`)
+    const total = amountOf(textAt(item, 'price_data', 'unit_amount'), `line_items[${index}][price_data][unit_amount]`) * quantity
+    return objectOf<Stripe.LineItem>({ id: store.newId('li'), object: 'item', amount_subtotal: total, amount_total: total, currency, quantity, description: textAt(item, 'price_data', 'product_data', 'name') ?? 'Payment' })
+  })
+}
+
+function customerOf(store: PaymentsStore, form: Form): string | null {
+  const customer = textAt(form, 'customer')
+  if (customer) return find(store.customers, 'customer', customer).id
+  return textAt(form, 'customer_creation') === 'always' ? createCustomer(store, { email: textAt(form, 'customer_email'), metadata: {} }).id : null
 }
 
 /** Ends sessions whose time is over. */
@@ -45,21 +60,22 @@ export function expireOverdue(store: PaymentsStore, webhooks: Webhooks) {
 
 /** Ends an open session. */
 export function expireSession(store: PaymentsStore, webhooks: Webhooks, session: Stripe.Checkout.Session): Stripe.Checkout.Session {
-  if (session.status !== 'open') throw invalid('Only Checkout Sessions with a status in ["open"] can be expired.')
-  session.status = 'expired'
-  session.url = null
+  if (session.status !== 'open') throw invalid(`Only Checkout Sessions with a status in ["open"] can be expired. This one has a status of ${session.status}.`)
+  Object.assign(session, { status: 'expired', url: null })
+  const intent = store.intents.get(idOf(session.payment_intent) ?? '')
+  if (intent) cancelIntent(store, webhooks, intent)
   webhooks.emit('checkout.session.expired', session)
   return session
 }
 
-/** What the payer does on the hosted page. */
-export function payOnPage(store: PaymentsStore, webhooks: Webhooks, session: Stripe.Checkout.Session, card: CardChoice): Stripe.PaymentIntent {
-  const facts = fakeFacts(session)
-  const existing = typeof session.payment_intent === 'string' ? store.intents.get(session.payment_intent) : undefined
-  const intent = existing ?? createIntent(store, webhooks, {
-    amount: session.amount_total ?? 0, currency: session.currency ?? 'eur', customer: typeof session.customer === 'string' ? session.customer : null, description: facts.title, metadata: facts.intentMetadata, savesCard: facts.savesCard,
+/** What the payer does on the hosted page, or on the page of the bank. */
+export function payOnPage(store: PaymentsStore, webhooks: Webhooks, session: Stripe.Checkout.Session, card: CardChoice | 'refuse'): Stripe.PaymentIntent {
+  const facts = store.sessionFacts.get(session.id)!
+  const intent = store.intents.get(idOf(session.payment_intent) ?? '') ?? createIntent(store, webhooks, {
+    amount: session.amount_total ?? 0, currency: session.currency ?? 'eur', customer: idOf(session.customer), description: facts.title, metadata: facts.intentMetadata, savesCard: facts.savesCard,
   })
   session.payment_intent = intent.id
+  if (card === 'refuse') return refuseConfirmation(webhooks, intent, false)
   confirmIntent(store, webhooks, intent, card)
   if (intent.status === 'succeeded') {
     Object.assign(session, { status: 'complete', payment_status: 'paid', url: null })

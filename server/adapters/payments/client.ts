@@ -92,7 +92,11 @@ function toCheckoutState(session: Stripe.Checkout.Session): CheckoutState {
 const idOf = (reference: string | { id: string } | null): string | null => typeof reference === 'string' ? reference : reference?.id ?? null
 
 async function chargeSavedCard(stripe: Stripe, request: Parameters<Payments['chargeSavedCard']>[0]): Promise<ChargeOutcome> {
-  const paid = await stripe.paymentIntents.retrieve(request.paidIntentId)
+  const paid = await stripe.paymentIntents.retrieve(request.paidIntentId).catch((error: unknown) => {
+    if (error instanceof Stripe.errors.StripeInvalidRequestError && error.code === 'resource_missing') return null
+    throw error
+  })
+  if (!paid) return { state: 'declined', intentId: null, reason: 'The payment provider does not know the deposit any more.' }
   const [customer, method] = [idOf(paid.customer), idOf(paid.payment_method)]
   if (!customer || !method) return { state: 'declined', intentId: null, reason: 'No card was saved with the deposit.' }
   try {
