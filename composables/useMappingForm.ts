@@ -25,7 +25,7 @@ export function useMappingForm(dataset: DatasetView, preview: TablePreview, onDo
     initial: {
       columns: mapping?.columns ?? preview.remembered?.columns ?? { temperature: preview.suggested.temperature, heatCapacity: preview.suggested.heatCapacity, sigma: preview.suggested.sigma },
       sampleId: chosenSample?.id ?? null,
-      sample: mapping ? factsOf(mapping.sample) : factsOf(chosenSample ?? (role === 'copper-standard' ? COPPER : {})),
+      sample: role === 'addenda' ? undefined : mapping?.sample ? factsOf(mapping.sample) : factsOf(chosenSample ?? (role === 'copper-standard' ? COPPER : {})),
       restoredRows: dataset.rejectedRows.filter(row => row.restored).map(row => row.row),
     },
   })

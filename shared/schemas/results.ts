@@ -26,7 +26,8 @@ const withoutNulls = (value: unknown) => value && typeof value === 'object' ? Ob
 export const mapDatasetSchema = z.object({
   columns: columnMappingSchema,
   sampleId: idSchema.nullish(),
-  sample: z.preprocess(withoutNulls, analysisSampleSchema),
+  /** Left out for addenda, which have no sample. */
+  sample: z.preprocess(withoutNulls, analysisSampleSchema.optional()),
   restoredRows: z.array(z.number().int().positive()).max(10_000, 'At most 10 000 rows can be put back; mend the file instead.').default([]),
 }).strict()
 export type MapDatasetInput = z.infer<typeof mapDatasetSchema>

@@ -1,3 +1,4 @@
+import type { StandardReading } from '#shared/heat-capacity/copper-standard'
 import type { SuggestedMapping } from '#shared/heat-capacity/table/head'
 import type { CorrectionSuggestion, HeatCapacityAnalysis, HeatCapacitySample, MaterialKind, Verdict } from '#shared/heat-capacity/types'
 import type { ColumnMapping } from '#shared/schemas/heat-capacity'
@@ -19,7 +20,8 @@ export interface RejectedRow {
 /** How a table was read: its columns and units, and the sample facts that the conversion rests on. */
 export interface DatasetMapping {
   columns: ColumnMapping
-  sample: HeatCapacitySample
+  /** Null for addenda, which are kept for the whole holder in mJ/K. */
+  sample: HeatCapacitySample | null
   /** Heads in the order of the file; files with the same heads are offered the same columns. */
   heads: string[]
   /** E.g. `molar mass 63.546 g/mol`. */
@@ -115,7 +117,7 @@ export interface CopperReading {
   datasetId: string
   at: string
   runNumber: number
-  /** Mean and greatest departure from the published equation over `temperatureRangeK`, per cent. */
+  /** Mean and largest departure from the published equation over `temperatureRangeK`, per cent. */
   meanDeviationPercent: number
   largestDeviationPercent: number
   temperatureRangeK: readonly [number, number]
@@ -174,8 +176,10 @@ export interface DatasetView {
   analyses: AnalysisSummary[]
   /** Mapped addenda tables of the same cryostat, newest first. */
   addendaChoices: { id: string, originalName: string, runNumber: number, uploadedAt: string }[]
-  /** The newest reading of the copper standard on this cryostat before this dataset. */
-  copperStandard: CopperReading | null
+  /** The newest reading of the copper standard on this cryostat before this dataset, as the check takes it. */
+  copperStandard: StandardReading | null
+  /** Every reading of the cryostat, oldest first: its control chart; only for a reading of the standard itself. */
+  copperHistory: CopperReading[]
   /** Thresholds that the manager tuned. */
   checkThresholds: Record<string, number>
   may: { map: boolean, analyse: boolean, sign: boolean }

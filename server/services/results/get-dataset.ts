@@ -1,10 +1,11 @@
 import { and, asc, desc, eq, getTableColumns, isNotNull, ne, sql } from 'drizzle-orm'
 import { type Actor, can } from '#shared/access/rules'
+import { lastStandardReading } from '#shared/heat-capacity/copper-standard'
 import type { AnalysisSummary, CurvePoints, DatasetView, SampleChoice } from '#shared/types/results'
 import type { Database } from '#server/db/client'
 import { analyses, cryostats, datasets, groups, people, runSamples, runs, samples, signOffs } from '#server/db/schema'
 import { readFacility } from '#server/services/facility/queries'
-import { lastCopperReading } from './copper-history'
+import { copperHistory } from './copper-history'
 import { datasetFor } from './run-of'
 
 /**
@@ -28,6 +29,8 @@ export async function getDataset(db: Database, request: { datasetId: string, act
     .where(eq(datasets.id, datasetId))
   const dataset = row!
   const { timeZone, checkThresholds } = await readFacility(db)
+  const readings = await copperHistory(db, run.cryostatId)
+  const earlier = readings.filter(reading => reading.datasetId !== datasetId).map(reading => ({ ...reading, at: new Date(reading.at) }))
   const may = (action: 'dataset:upload' | 'analysis:write' | 'analysis:sign') => can(actor, action, { groupId: run.groupId })
   return {
     id: dataset.id, role: dataset.role, originalName: dataset.originalName, bytes: dataset.bytes, sha256: dataset.sha256,
@@ -38,7 +41,8 @@ export async function getDataset(db: Database, request: { datasetId: string, act
     mapping: dataset.mapping, rejectedRows: dataset.rejectedRows, pointCount: dataset.pointCount,
     analyses: await analysesOf(db, datasetId),
     addendaChoices: await addendaOf(db, run.groupId, run.cryostatId, datasetId),
-    copperStandard: await lastCopperReading(db, { cryostatId: run.cryostatId, before: dataset.createdAt }),
+    copperStandard: lastStandardReading(earlier, dataset.createdAt) ?? null,
+    copperHistory: dataset.role === 'copper-standard' ? readings : [],
     checkThresholds,
     may: { map: may('dataset:upload'), analyse: may('analysis:write'), sign: may('analysis:sign') },
   }

@@ -1,6 +1,7 @@
 import { and, eq } from 'drizzle-orm'
 import type { Actor } from '#shared/access/rules'
 import { DomainError } from '#shared/errors'
+import { requireTotalUnit, WHOLE_HOLDER } from '#shared/heat-capacity/addenda-amount'
 import { applyMapping } from '#shared/heat-capacity/apply-mapping'
 import { readTable } from '#shared/heat-capacity/read-table'
 import { parseFormula } from '#shared/heat-capacity/sample'
@@ -26,18 +27,19 @@ import { datasetFor } from './run-of'
  */
 export async function mapDataset(db: Database, files: FileStore, request: MapDatasetInput & { datasetId: string, actor: Actor }): Promise<MappingReply> {
   const { datasetId, actor, columns, restoredRows } = request
-  await datasetFor(db, datasetId, actor, 'dataset:upload')
-  const sample = sampleOf(request.sample)
+  const { dataset: { role } } = await datasetFor(db, datasetId, actor, 'dataset:upload')
+  const sample = role === 'addenda' ? null : sampleOf(request.sample)
+  if (!sample) atFormField(() => requireTotalUnit(columns.heatCapacity.unit))
   // Read before the transaction: half a million rows take a second, during which nobody should wait.
   const table = readTable((await readRawFile(db, files, { datasetId, actor })).content)
-  const { curve, rejectedRows, conversionUses } = atFormField(() => applyMapping(table, columns, sample, restoredRows))
+  const { curve, rejectedRows, conversionUses } = atFormField(() => applyMapping(table, columns, sample ?? WHOLE_HOLDER, restoredRows))
 
   return db.transaction(async (tx) => {
     const { dataset } = await datasetFor(tx, datasetId, actor, 'dataset:upload')
     await checkSample(tx, dataset.runId, request.sampleId)
     await tx.update(datasets).set({
       sampleId: request.sampleId ?? null,
-      mapping: { columns, sample, heads: [...table.heads], conversionUses: [...conversionUses], rowNumbers: curve.rowNumbers },
+      mapping: { columns, sample, heads: [...table.heads], conversionUses: sample ? [...conversionUses] : [], rowNumbers: curve.rowNumbers },
       rowCount: table.rowCount,
       rejectedRows: [...rejectedRows],
       temperatureK: [...curve.temperatureK],
@@ -45,7 +47,7 @@ export async function mapDataset(db: Database, files: FileStore, request: MapDat
       sigma: curve.sigma ? [...curve.sigma] : null,
     }).where(eq(datasets.id, datasetId))
     await writeAudit(tx, { actorId: actor.personId, action: 'dataset:map', objectType: 'dataset', objectId: datasetId, detail: { columns, restoredRows, points: curve.temperatureK.length } })
-    return { pointCount: curve.temperatureK.length, rejectedRows: [...rejectedRows], conversionUses: [...conversionUses] }
+    return { pointCount: curve.temperatureK.length, rejectedRows: [...rejectedRows], conversionUses: sample ? [...conversionUses] : [] }
   })
 }
 
@@ -55,7 +57,8 @@ export async function mapDataset(db: Database, files: FileStore, request: MapDat
  * @param input facts as typed
  * @throws DomainError when the formula is none
  */
-export function sampleOf(input: AnalysisSampleInput): HeatCapacitySample {
+export function sampleOf(input: AnalysisSampleInput | undefined): HeatCapacitySample {
+  if (!input) throw new DomainError('invalid', 'Enter the chemical formula of the sample, such as Cu or Al2O3.', ['sample', 'formula'])
   return { ...input, ...atFormField(() => parseFormula(input.formula)) }
 }
 
