@@ -74,10 +74,10 @@ describe.each(DRIVERS)('saving analyses, on %s', (driver) => {
     expect(await statusOf(plain.analysisId, 'upturn')).toBe('fail')
     const tail = (await read((await save(datasetId, ['gamma', 'beta3', 'tail'], [1.8, 14.5])).analysisId)).result.fit.coefficients
     // Independently fitted values and errors of PROVENANCE.json (1 % relative weights), there in J
-    expect(tail.tail!.value / 498.67030768831566).toBeCloseTo(1, 3)
+    expect(tail.tail!.value / 498.670307688).toBeCloseTo(1, 3)
     expect(tail.beta3!.value / 0.4281294232780009).toBeCloseTo(1, 3)
-    expect(tail.gamma!.value / -0.23023960570268725).toBeCloseTo(1, 3)
-    expect(tail.gamma!.standardError / 0.21567459051054553).toBeCloseTo(1, 3)
+    expect(tail.gamma!.value / -0.230239605703).toBeCloseTo(1, 3)
+    expect(tail.gamma!.standardError / 0.215674590511).toBeCloseTo(1, 3)
     expect(Math.abs(tail.gamma!.value)).toBeLessThan(2 * tail.gamma!.standardError)
   })
 
