@@ -43,6 +43,13 @@ describe.each(Object.entries(themes))('colours by %s', (_, tokens) => {
   })
 })
 
+describe('on paper', () => {
+  it('the colours of night are for the screen only', () => {
+    const opened = [...css.slice(0, night).matchAll(/@media ([^{]+)\{|[{}]/g)].reduce<string[]>((open, [mark, media]) => mark === '}' ? open.slice(0, -1) : [...open, media?.trim() ?? ''], [])
+    expect(opened).toContain('screen')
+  })
+})
+
 describe('the measure itself', () => {
   it('gives 21 for black on white and 4.54 for #767676, as WCAG’s own examples do', () => {
     expect(contrast('#000000', '#ffffff')).toBeCloseTo(21, 6)
