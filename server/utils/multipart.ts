@@ -3,10 +3,13 @@ import { getRequestHeader } from 'h3'
 import { DomainError } from '#shared/errors'
 import { BODY_LIMIT, readLimitedBody } from '#server/utils/body'
 
-/** One uploaded file with the text fields sent beside it. */
+/** A file as it came. */
+export interface UploadedFile { name: string, content: Uint8Array }
+
+/** Files and text fields of a form by name. */
 export interface UploadedForm {
-  file: { name: string, content: Uint8Array } | null
-  fields: Record<string, string>
+  files: Partial<Record<string, UploadedFile>>
+  fields: Partial<Record<string, string>>
 }
 
 /**
@@ -14,7 +17,7 @@ export interface UploadedForm {
  *
  * @param event the request
  * @param limitBytes largest body, the form's own lines included
- * @throws DomainError `invalid` when the body is no form or holds two files
+ * @throws DomainError `invalid` when the body is no form or holds a name twice
  */
 export async function readUpload(event: H3Event, limitBytes: number = BODY_LIMIT.upload): Promise<UploadedForm> {
   const contentType = getRequestHeader(event, 'content-type') ?? ''
@@ -23,14 +26,11 @@ export async function readUpload(event: H3Event, limitBytes: number = BODY_LIMIT
   }
   const body = await readLimitedBody(event, limitBytes)
   const form = await parseForm(body, contentType)
-  const upload: UploadedForm = { file: null, fields: {} }
+  const upload: UploadedForm = { files: {}, fields: {} }
   for (const [name, value] of form) {
-    if (typeof value === 'string') {
-      upload.fields[name] = value
-      continue
-    }
-    if (upload.file) throw new DomainError('invalid', 'Send one file at a time.', ['file'])
-    upload.file = { name: value.name, content: new Uint8Array(await value.arrayBuffer()) }
+    if (name in upload.files || name in upload.fields) throw new DomainError('invalid', 'Send one file at a time.', [name])
+    if (typeof value === 'string') upload.fields[name] = value
+    else upload.files[name] = { name: value.name, content: new Uint8Array(await value.arrayBuffer()) }
   }
   return upload
 }

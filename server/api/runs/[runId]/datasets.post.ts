@@ -6,7 +6,7 @@ import { readUpload } from '#server/utils/multipart'
 
 /** Takes in a measured table as it came. */
 export default defineApi({ access: 'dataset:upload', params: runDatasetParams, status: 201 }, async ({ event, db, actor, params }) => {
-  const { file, fields } = await readUpload(event)
+  const { files, fields } = await readUpload(event)
   const role = datasetRoleSchema.parse(fields.role ?? 'measurement', { path: ['role'] })
-  return uploadDataset(db, useFileStore(), { runId: params.runId, role, file, actor })
+  return uploadDataset(db, useFileStore(), { runId: params.runId, role, file: files.file ?? null, actor })
 })
