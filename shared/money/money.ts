@@ -20,11 +20,15 @@ export function currencyExponent(currency: string): number {
 /**
  * Rounds half away from zero, as invoices are rounded.
  *
- * @param value any finite number; one within a billionth of a half counts as a half, since 1.005 × 100 is 100.49999…
+ * @param value any finite number; one a few units of the last binary place under a half counts as a half, since
+ *   1.005 × 100 is 100.49999…
  */
 export function roundHalfAwayFromZero(value: number): number {
+  // A whole number stays as it is: adding a half to a large one would already change it.
+  if (Number.isInteger(value)) return value + 0
   const size = Math.abs(value)
-  const rounded = Math.floor(size + 0.5 + size * 1e-12 + 1e-9)
+  const tolerance = Math.min(1e-3, 1e-9 + 4 * Number.EPSILON * size)
+  const rounded = Math.floor(size + 0.5 + tolerance)
   return value < 0 ? -rounded + 0 : rounded
 }
 
@@ -62,13 +66,15 @@ export function shareOf(amountMinor: number, basisPoints: number): number {
  */
 export function allocate(totalMinor: number, weights: readonly number[]): number[] {
   const sum = weights.reduce((total, weight) => total + weight, 0)
-  if (!(sum > 0) || weights.some(weight => weight < 0)) throw new DomainError('invalid', 'An amount can only be split over shares of zero or more, of which one is above zero.', ['weights'])
+  if (!(sum > 0) || !Number.isFinite(sum) || weights.some(weight => weight < 0)) throw new DomainError('invalid', 'An amount can only be split over shares of zero or more, of which one is above zero.', ['weights'])
   const sign = totalMinor < 0 ? -1 : 1
   const exact = weights.map(weight => Math.abs(totalMinor) * weight / sum)
   const parts = exact.map(Math.floor)
   const left = Math.abs(totalMinor) - parts.reduce((total, part) => total + part, 0)
   const byRemainder = exact.map((value, index) => ({ index, remainder: value - Math.floor(value) })).sort((a, b) => b.remainder - a.remainder || a.index - b.index)
-  for (const { index } of byRemainder.slice(0, left)) parts[index] = (parts[index] ?? 0) + 1
+  // In amounts near 2⁵³ a product may come out a unit high: then units are taken back, from the smallest remainders.
+  const takers = left >= 0 ? byRemainder : byRemainder.reverse().filter(({ index }) => parts[index] !== 0)
+  for (const { index } of takers.slice(0, Math.abs(left))) parts[index] = (parts[index] ?? 0) + Math.sign(left)
   return parts.map(part => part * sign + 0)
 }
 
@@ -83,14 +89,21 @@ export function allocate(totalMinor: number, weights: readonly number[]): number
 export function parseMoney(text: string, currency: string): Money {
   const exponent = currencyExponent(currency)
   const compact = text.replace(/[\s\u2009\u202F\u00A0']/g, '').replace('−', '-')
-  // The last comma or point is the decimal sign when no more digits follow it than the currency has.
-  const match = /^(-?)(\d{1,3}(?:[.,]?\d{3})*|\d+)(?:[.,](\d{1,3}))?$/.exec(compact)
-  const decimals = match?.[3] ?? ''
-  if (!match || decimals.length > exponent) {
+  const [, minus, digits = '', decimals = ''] = (exponent > 0 ? withDecimals(exponent).exec(compact) : null) ?? WHOLE.exec(compact) ?? []
+  const size = Number(digits.replace(/[.,]/g, '')) * 10 ** exponent + Number(decimals.padEnd(exponent, '0'))
+  if (digits === '' || !Number.isSafeInteger(size)) {
     const example = exponent === 0 ? '2310' : `2310.${'50'.padEnd(exponent, '0')}`
     throw new DomainError('invalid', `"${text}" is not an amount in ${currency}. Enter a number such as ${example}.`)
   }
-  const whole = Number((match[2] ?? '').replace(/[.,]/g, ''))
-  const amount = whole * 10 ** exponent + Number(decimals.padEnd(exponent, '0') || 0)
-  return { amount: (match[1] === '-' ? -amount : amount) + 0, currency }
+  return { amount: (minus === '-' ? -size : size) + 0, currency }
+}
+
+// Thousands are grouped by one mark throughout, and a group never begins with a zero: 0.005 is no five.
+const POINTS = '[1-9]\\d{0,2}(?:\\.\\d{3})+'
+const COMMAS = '[1-9]\\d{0,2}(?:,\\d{3})+'
+const WHOLE = new RegExp(`^(-?)(\\d+|${POINTS}|${COMMAS})$`)
+
+/** The last mark is the decimal sign when no more digits follow it than the currency has, and it groups nothing before. */
+function withDecimals(exponent: number): RegExp {
+  return new RegExp(`^(-?)(\\d+|${POINTS}(?=,)|${COMMAS}(?=\\.))[.,](\\d{1,${exponent}})$`)
 }
