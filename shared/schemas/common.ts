@@ -1,7 +1,14 @@
 import { z } from 'zod'
+import { plainWords } from '#shared/schemas/plain-words'
+
+// Called here and not there: a bundler may drop a module of which nothing is used, and every schema uses this one.
+z.setErrorMap(plainWords)
 
 /** An id as the server gives it. */
-export const idSchema = z.string().uuid('This link does not name anything here. Go back and choose it from the list.')
+export const idSchema = z.string({ required_error: 'Choose one from the list.' }).uuid('This link does not name anything here. Go back and choose it from the list.')
+
+/** The browser's own key of a request, under which it is done once however often it is sent. */
+export const clientKeySchema = z.string({ required_error: 'This page has no key for its request. Reload it and send it again.' }).uuid('The key of this request is not valid. Reload the page and send it again.')
 
 /** An instant with its offset, ISO 8601. */
 export const instantSchema = z.string({ required_error: 'Enter a date and time.' }).datetime({ offset: true, message: 'Enter a date and time.' }).transform(text => new Date(text))
