@@ -1,9 +1,9 @@
 import { z } from 'zod'
 import { PHASE_IDS } from '#shared/planning/types'
-import { idSchema, instantSchema, lineSchema, quantitySchema, textSchema } from '#shared/schemas/common'
+import { clientKeySchema, idSchema, instantSchema, lineSchema, quantitySchema, textSchema } from '#shared/schemas/common'
 
 /** What every line of the run sheet has: when it was read, and the browser's key, under which it is recorded once. */
-const entryFields = { at: instantSchema, clientKey: z.string().uuid(), note: textSchema(1000).optional() }
+const entryFields = { at: instantSchema, clientKey: clientKeySchema, note: textSchema(1000).optional() }
 
 export const levelPercentSchema = quantitySchema('a level', '%', { least: 0, most: 100 })
 

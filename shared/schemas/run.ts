@@ -1,5 +1,5 @@
 import { z } from 'zod'
-import { idSchema, instantSchema, lineSchema, quantitySchema, textSchema } from '#shared/schemas/common'
+import { clientKeySchema, idSchema, instantSchema, lineSchema, quantitySchema, textSchema } from '#shared/schemas/common'
 
 /** What of a run planning needs; shared by the estimate and the request. */
 const planFields = {
@@ -26,7 +26,7 @@ export const runAskSchema = z.object({
   startsAt: instantSchema,
   costCode: textSchema(40).optional(),
   purchaseOrder: textSchema(40).optional(),
-  clientKey: z.string().uuid(),
+  clientKey: clientKeySchema,
 }).strict().refine(rangeIsOrdered, rangeSentence)
 
 /** The id in the path of a run's routes. */
