@@ -28,7 +28,8 @@ export function wallTimeOf(instant: Date, timeZone: string): WallTime {
  */
 export function instantOfWallTime(wall: WallTime, timeZone: string, fold: 'first' | 'second' = 'first'): Date {
   const naive = Date.parse(`${wall.date}T${wall.time}:00Z`)
-  if (Number.isNaN(naive)) throw new DomainError('invalid', 'This is not a date and time. Enter a date such as 2027-05-04 and a time such as 09:30.', ['time'])
+  // Date.parse rolls 30 February over into March, and 24:00 into the next day.
+  if (Number.isNaN(naive) || new Date(naive).toISOString().slice(0, 16) !== `${wall.date}T${wall.time}`) throw new DomainError('invalid', 'This is not a date and time. Enter a date such as 2027-05-04 and a time such as 09:30.', ['time'])
   // The offset on either side of any change near this time; a valid instant is one whose own offset leads back to it.
   const candidates = [-24, 24].map(hours => naive - tzOffset(timeZone, new Date(naive + hours * 60 * MS_PER_MINUTE)) * MS_PER_MINUTE)
     .filter(instant => naive - tzOffset(timeZone, new Date(instant)) * MS_PER_MINUTE === instant)
