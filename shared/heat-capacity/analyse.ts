@@ -1,4 +1,5 @@
-import type { Addenda, AddendaShare } from '#shared/heat-capacity/addenda'
+import { DomainError } from '#shared/errors'
+import type { Addenda } from '#shared/heat-capacity/addenda'
 import { subtractAddenda } from '#shared/heat-capacity/addenda'
 import type { CheckContext } from '#shared/heat-capacity/checks/context'
 import { runChecks } from '#shared/heat-capacity/checks/index'
@@ -6,7 +7,7 @@ import { thresholdsWith } from '#shared/heat-capacity/checks/thresholds'
 import type { StandardReading } from '#shared/heat-capacity/copper-standard'
 import { ENGINE_VERSION } from '#shared/heat-capacity/engine-version'
 import { fitLowTemperature, withMassUncertainty } from '#shared/heat-capacity/fit'
-import { suggestCorrections } from '#shared/heat-capacity/suggestions'
+import { scaledCurve, suggestCorrections } from '#shared/heat-capacity/suggestions'
 import type { FitModel, FitWeights, HeatCapacityAnalysis, HeatCapacityCurve, HeatCapacitySample, LowTemperatureFit } from '#shared/heat-capacity/types'
 import { verdictOf } from '#shared/heat-capacity/verdict'
 import { handbookEntry } from '#shared/materials/elements'
@@ -36,24 +37,42 @@ export interface AnalysisInput {
  * @throws DomainError when the window does not allow the fit, or the addenda do not cover it
  */
 export function analyseHeatCapacity(input: AnalysisInput): HeatCapacityAnalysis {
-  const { curve: total, model } = input
-  const net = input.addenda && subtractAddenda(total, input.addenda, model.windowK)
-  const context = contextOf(input, net?.curve ?? total, net)
+  const { context, indices } = look(input, input.curve)
   const checks = runChecks(context)
-  const suggestions = suggestCorrections({ context, checks, massEntersConversion: input.massEntersConversion ?? false, contextWith: curve => contextOf(input, curve, net) })
-  const fit = net ? { ...context.reported, usedIndices: context.reported.usedIndices.map(index => net.indices[index]!) } : context.reported
+  const suggestions = suggestCorrections({
+    context, checks, massEntersConversion: input.massEntersConversion ?? false,
+    contextWith: factor => lookIfPossible(input, scaledCurve(input.curve, factor)),
+  })
+  const fit = indices ? { ...context.reported, usedIndices: context.reported.usedIndices.map(index => indices[index]!) } : context.reported
   return { engineVersion: ENGINE_VERSION, fit, checks, verdict: verdictOf(checks), suggestions }
 }
 
-function contextOf({ sample, model, weights, thresholds, standard }: AnalysisInput, curve: HeatCapacityCurve, addenda: AddendaShare | undefined): CheckContext {
+/** The checks' view of a measured curve, and where its points stand in that curve when addenda left some out. */
+function look({ sample, model, weights, addenda, thresholds, standard }: AnalysisInput, total: HeatCapacityCurve): { context: CheckContext, indices?: readonly number[] } {
+  const net = addenda && subtractAddenda(total, addenda, model.windowK)
+  const curve = net?.curve ?? total
   const options = { atomsPerFormulaUnit: sample.atomsPerFormulaUnit, weights }
   const fit = fitLowTemperature(curve, model, options)
   return {
-    curve, sample, fit, addenda, standard,
-    reported: withMassOf(sample, fit),
-    thresholds: thresholdsWith(thresholds),
-    handbook: handbookEntry(sample.formula),
-    refit: terms => fitLowTemperature(curve, { terms, windowK: model.windowK }, options),
+    indices: net?.indices,
+    context: {
+      curve, sample, fit, standard,
+      addenda: net,
+      reported: withMassOf(sample, fit),
+      thresholds: thresholdsWith(thresholds),
+      handbook: handbookEntry(sample.formula),
+      refit: terms => fitLowTemperature(curve, { terms, windowK: model.windowK }, options),
+    },
+  }
+}
+
+function lookIfPossible(input: AnalysisInput, total: HeatCapacityCurve): CheckContext | undefined {
+  try {
+    return look(input, total).context
+  }
+  catch (error) {
+    if (error instanceof DomainError) return undefined
+    throw error
   }
 }
 

@@ -61,7 +61,7 @@ function chooseModel({ terms: given, windowK }: TableCheckInput, curve: HeatCapa
   const whole: Choice = { terms, windowK: [curve.temperatureK[0]!, curve.temperatureK[curve.temperatureK.length - 1]!], chosenBy: 'whole-range', reason: 'The points are too few for an advice, so all of them are used.' }
   try {
     const aboveTransition = sample.kind === 'superconductor' ? sample.criticalTemperatureK : undefined
-    const advice = adviseWindow(curve, { atomsPerFormulaUnit: sample.atomsPerFormulaUnit, terms, lowK: aboveTransition })
+    const advice = adviseWindow(curve, { atomsPerFormulaUnit: sample.atomsPerFormulaUnit, terms, lowK: aboveTransition, offerBeta5: given === undefined })
     return { terms: given ?? advice.terms, windowK: advice.windowK, chosenBy: 'advice', reason: advice.reason }
   }
   catch (error) {

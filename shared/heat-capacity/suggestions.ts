@@ -16,8 +16,8 @@ export interface SuggestionInput {
   readonly checks: readonly CheckResult[]
   /** Whether the table is per whole sample, so that the mass was used. */
   readonly massEntersConversion: boolean
-  /** The view of the same result with every heat capacity multiplied. */
-  readonly contextWith: (curve: HeatCapacityCurve) => CheckContext
+  /** The view of the same result with every measured heat capacity multiplied, before addenda are taken off; undefined when nothing is left. */
+  readonly contextWith: (factor: number) => CheckContext | undefined
 }
 
 /**
@@ -32,7 +32,9 @@ export function suggestCorrections(input: SuggestionInput): CorrectionSuggestion
   if (!broken.some(id => id === 'scale' || id === 'handbook' || id === 'debye-range')) return []
   const mended = slipsFor(context.sample, massEntersConversion).flatMap((slip) => {
     const factor = 1 / slip.ratio
-    const results = BROKEN_TOGETHER.map(check => check(input.contextWith(scaledCurve(context.curve, factor))))
+    const converted = input.contextWith(factor)
+    if (!converted) return []
+    const results = BROKEN_TOGETHER.map(check => check(converted))
     const inBand = results.every(result => result.status === 'ok' || result.status === 'not-applicable' || (result.id !== 'scale' && result.status === 'caution'))
     return inBand ? [{ rank: results.filter(result => result.status === 'caution').length, suggestion: { id: slip.id, factor, message: `The values look off by ${slip.words}. ${slip.remedy} Scale, handbook and Debye temperature then fall into band.` } }] : []
   })
@@ -51,9 +53,14 @@ export function scaledCurve(curve: HeatCapacityCurve, factor: number): HeatCapac
   return { ...curve, heatCapacity: curve.heatCapacity.map(value => value * factor), ...(curve.sigma ? { sigma: curve.sigma.map(value => value * factor) } : {}) }
 }
 
+/** Θ_D/T down to which a Debye curve of the low-temperature Θ_D is good to a few per cent; real phonon spectra leave it soon after. */
+const CURVE_DIVISOR = 40
+
 /** Excess over the handbook curve that is everywhere above 8 %, under tenfold, and not one factor. */
 function addendaForgotten(context: CheckContext): boolean {
   if (!context.handbook || context.addenda) return false
+  // Warmer than that the handbook curve itself, one Θ_D for all temperatures, is too low.
+  if (usedRangeK(context)[1] > context.handbook.debyeTemperatureK / CURVE_DIVISOR) return false
   const ratios = profileOf(context.curve, usedRangeK(context)).map(bin => bin.ratio * bin.temperatureK / handbookCurve(context, bin.temperatureK)!)
   const [least, most] = [Math.min(...ratios), Math.max(...ratios)]
   return least > 1.08 && most < 10 && most > 1.1 * least

@@ -40,6 +40,8 @@ export interface AdviceOptions extends FitOptions {
   readonly lowK?: number
   /** Windows to try; 40 when left out. */
   readonly candidateCount?: number
+  /** False where the terms are settled, so that β₅T⁵ is not tried. */
+  readonly offerBeta5?: boolean
 }
 
 /** T³ law: the lattice keeps to it within about 1 % below Θ_D/50 for real phonon spectra. Common practice, no source. */
@@ -75,14 +77,14 @@ export function adviseWindow(curve: HeatCapacityCurve, options: AdviceOptions): 
   const plateau = agreeing(eligible)
   const chosen = plateau[plateau.length - 1]!
   const windowK = [lowK, chosen.highK] as const
-  const longer = withBeta5(curve, terms, windowK, options, chosen)
+  const longer = options.offerBeta5 === false ? undefined : withBeta5(curve, terms, windowK, options, chosen)
   return {
     series,
     plateauK: [plateau[0]!.highK, chosen.highK],
     windowK,
     terms: longer ?? terms,
     rule: inRange.length > 0 ? 'kept' : 'no-window-in-T3-range',
-    reason: reasonFor({ series, inRange, plateau, chosen, addsBeta5: longer !== undefined, alreadyBeta5: terms.includes('beta5') }),
+    reason: reasonFor({ series, inRange, plateau, chosen, addsBeta5: longer !== undefined, alreadyBeta5: terms.includes('beta5') || options.offerBeta5 === false }),
   }
 }
 
