@@ -5,7 +5,7 @@ const LATEST_BEFORE_START_H = 24
 
 /**
  * The instant by which a deposit must be paid: so many hours after approval, but at least a day before the start; for a
- * run approved at short notice, an hour after approval at the earliest.
+ * run approved at short notice, an hour after approval at the earliest, and never after the start.
  *
  * @param approvedAt when the run was approved
  * @param startsAt when its slot begins
@@ -15,5 +15,5 @@ export function payByInstant(approvedAt: Date, startsAt: Date, payByHours: numbe
   const usual = approvedAt.getTime() + payByHours * HOUR_MS
   const latest = startsAt.getTime() - LATEST_BEFORE_START_H * HOUR_MS
   const earliest = approvedAt.getTime() + HOUR_MS
-  return new Date(Math.max(earliest, Math.min(usual, latest)))
+  return new Date(Math.min(startsAt.getTime(), Math.max(earliest, Math.min(usual, latest))))
 }
