@@ -1,5 +1,5 @@
 import { shareOf } from '#shared/money/money'
-import { addDays, instantOfWallTime, wallTimeOf } from '#shared/time/facility-time'
+import { addDays, instantOfWallTime, type WallTime, wallTimeOf } from '#shared/time/facility-time'
 
 /** From so many days before the start, this percentage of the deposit comes back. */
 export interface RefundStep {
@@ -33,14 +33,13 @@ export function refundOf(depositMinor: number, withdrawnAt: Date, startsAt: Date
   return { amountMinor: shareOf(depositMinor, percent * 100), percent }
 }
 
-function boundary(start: { date: string, time: string }, daysBefore: number, timeZone: string): Date {
+function boundary(start: WallTime, daysBefore: number, timeZone: string): Date {
   const date = addDays(start.date, -daysBefore)
   try {
     return instantOfWallTime({ date, time: start.time }, timeZone)
   }
   catch {
-    // The clock is put forward over this time on that day: the hour before it is the last that exists.
-    const hour = String(Number(start.time.slice(0, 2)) - 1).padStart(2, '0')
-    return instantOfWallTime({ date, time: `${hour}:59` }, timeZone)
+    // The clock is put forward over this time on that day: it is read as if it were not, 24 h after the day before.
+    return new Date(instantOfWallTime({ date: addDays(date, -1), time: start.time }, timeZone).getTime() + 86_400_000)
   }
 }

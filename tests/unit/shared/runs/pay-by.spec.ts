@@ -15,6 +15,8 @@ describe('the instant by which a deposit must be paid', () => {
     ['an hour after approval at short notice', '01T09:00', '01T19:00', 72, '01T10:00'],
     // A day before the start is 30 min after approval: the hour is the least.
     ['an hour even where a day before the start is sooner', '01T09:00', '02T09:30', 72, '01T10:00'],
+    // Start 20 min after approval: an hour would be 40 min into the slot.
+    ['the start, where not even an hour is left', '01T09:00', '01T09:20', 72, '01T09:20'],
   ])('is %s', (_, approved, starts, term, payBy) => {
     expect(payByInstant(at(approved), at(starts), term)).toEqual(at(payBy))
   })
