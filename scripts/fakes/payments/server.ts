@@ -4,11 +4,22 @@ import { controls } from './controls'
 import { handleApi } from './handle-api'
 import { handlePayPage } from './handle-pay-page'
 import { expireOverdue } from './sessions'
+import { keepState } from './state'
 import { PaymentsStore } from './store'
 import { Webhooks } from './webhooks'
 
-/** How the fake is started. Host and public address are for containers; without them it listens on loopback. */
-export interface PaymentsFakeOptions { port: number, webhookUrl: string, webhookSecret: string, apiKey?: string, host?: string, publicUrl?: string }
+/** How the fake is started. */
+export interface PaymentsFakeOptions {
+  port: number
+  webhookUrl: string
+  webhookSecret: string
+  apiKey?: string
+  /** Where it keeps what it knows, so that it remembers payments over a restart as the real provider does. */
+  stateFile?: string
+  /** For containers; without them it listens on loopback. */
+  host?: string
+  publicUrl?: string
+}
 
 /** A running fake. */
 export interface PaymentsFake { url: string, port: number, store: PaymentsStore, close(): Promise<void> }
@@ -27,10 +38,11 @@ const EXPIRE_EVERY_MS = 1000
 export async function startPaymentsFake(options: PaymentsFakeOptions): Promise<PaymentsFake> {
   const { host = '127.0.0.1' } = options
   const store = new PaymentsStore()
-  if (options.stateFile) loadState(options.stateFile, store)
+  const state = keepState(options.stateFile, store)
   const webhooks = new Webhooks(store, { url: options.webhookUrl, secret: options.webhookSecret })
   const fake: Fake = { store, webhooks, publicUrl: '', apiKey: options.apiKey }
   const server = createServer((request, response) => {
+    if (request.method === 'POST') response.once('close', state.changed)
     void handle(fake, request, response).catch((error: unknown) => {
       if (!response.headersSent) response.writeHead(500, { 'content-type': 'text/plain' })
       response.end(String(error))
@@ -46,6 +58,7 @@ export async function startPaymentsFake(options: PaymentsFakeOptions): Promise<P
     close: () => new Promise((resolve) => {
       clearInterval(expiring)
       webhooks.close()
+      state.close()
       server.close(() => resolve())
       server.closeAllConnections()
     }),
