@@ -40,8 +40,9 @@ export async function startJobs(open: OpenDatabase, handlers: JobHandlers): Prom
   // The embedded database has one process: a job still marked active was cut off when the last one died. On a server it
   // may be another process's, and comes back when its time is over.
   if (open.driver === 'pglite') await open.query('update jobs.job set state = \'retry\', start_after = now() where state = \'active\'')
-  for (const name of Object.keys(handlers) as JobName[]) await startWorker(started, name, handlers, open)
+  // Before the workers: a job taken up again may queue others at once.
   boss = started
+  for (const name of Object.keys(handlers) as JobName[]) await startWorker(started, name, handlers, open)
   return {
     stop: async () => {
       boss = undefined
