@@ -7,5 +7,5 @@ export function formatDuration(durationS: number): string {
     ? [[Math.floor(Math.round(minutes / 60) / 24), 'd'], [Math.round(minutes / 60) % 24, 'h']] as const
     : [[Math.floor(minutes / 60), 'h'], [minutes % 60, 'min']] as const
   const shown = parts.filter(([value]) => value > 0).map(([value, unit]) => `${value}${THIN_SPACE}${unit}`)
-  return `${durationS < 0 ? '\u2212' : ''}${shown.join(' ') || `0${THIN_SPACE}min`}`
+  return `${durationS < 0 && minutes > 0 ? '\u2212' : ''}${shown.join(' ') || `0${THIN_SPACE}min`}`
 }
