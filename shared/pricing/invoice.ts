@@ -23,7 +23,7 @@ export interface InvoiceAmounts {
 
 /**
  * Sets the actual lines beside the estimated ones, in the order of the actual ones, and keeps estimated lines of which
- * nothing was used, with a quantity of zero.
+ * nothing was used, with a quantity of zero, so that the estimates still add up to the quote.
  *
  * @param actual lines priced from the log
  * @param estimated lines of the quote
@@ -31,7 +31,7 @@ export interface InvoiceAmounts {
 export function besideEstimate(actual: readonly ChargeLine[], estimated: readonly ChargeLine[]): InvoiceLine[] {
   const estimateOf = (kind: ChargeKind) => estimated.find(line => line.kind === kind)
   const used = actual.map((line): InvoiceLine => ({ ...line, estimatedQuantity: estimateOf(line.kind)?.quantity ?? null, estimatedNetMinor: estimateOf(line.kind)?.netMinor ?? null }))
-  const unused = estimated.filter(line => !actual.some(({ kind }) => kind === line.kind) && line.kind !== 'minimum')
+  const unused = estimated.filter(line => !actual.some(({ kind }) => kind === line.kind))
     .map((line): InvoiceLine => ({ ...line, quantity: 0, netMinor: 0, estimatedQuantity: line.quantity, estimatedNetMinor: line.netMinor }))
   return [...used, ...unused]
 }

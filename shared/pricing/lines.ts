@@ -1,4 +1,4 @@
-import { multiplyPrice } from '#shared/money/money'
+import { multiplyPrice, roundHalfAwayFromZero } from '#shared/money/money'
 import type { ClassPrices } from '#shared/pricing/rate-card'
 
 /** What is charged for. */
@@ -41,7 +41,8 @@ const DECIMALS: Readonly<Record<keyof ChargeQuantities, number>> = { cooldowns: 
 
 /** Quantities as charged: litres to a tenth, days and hours to a hundredth, so that the paper's arithmetic can be redone by hand. */
 export function chargedQuantity(key: keyof ChargeQuantities, value: number): number {
-  return Number(value.toFixed(DECIMALS[key]))
+  const scale = 10 ** DECIMALS[key]
+  return roundHalfAwayFromZero(value * scale) / scale
 }
 
 /**

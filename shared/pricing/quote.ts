@@ -25,7 +25,7 @@ export interface Quote {
   readonly depositMinor: number
 }
 
-/** Operator hours a run takes: mounting and start two, each transfer one, end one (common practice, no source). */
+/** Operator hours a run takes: two to start it, one to end it, half an hour to mount each sample (common practice, no source). */
 const OPERATOR_HOURS = { startAndEnd: 3, perSample: 0.5 }
 
 /** Quantities of a planned run at one point of its interval. */
@@ -61,7 +61,9 @@ export function quoteRun(estimate: Pick<RunEstimate, 'totalHours' | 'totalHelium
   }
   const lines = priceLines(plannedQuantities(estimate, facts, 'likely'), prices)
   const netMinor = netOf(lines)
-  const totalMinor = { low: totalAt('low'), likely: totalAt('likely'), high: totalAt('high') }
+  const totals = [totalAt('low'), totalAt('likely'), totalAt('high')] as const
+  // Where the credit for recovered helium comes near the price of a litre, more litres may cost less.
+  const totalMinor = { low: Math.min(...totals), likely: totals[1], high: Math.max(...totals) }
   return {
     lines,
     netMinor,

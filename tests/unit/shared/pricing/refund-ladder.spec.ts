@@ -24,9 +24,9 @@ describe('what of a deposit comes back', () => {
 
   it('counts days on the calendar where the clock is put forward in between', () => {
     // Start Monday 2027-04-05 09:00 Oslo, summer time: 07:00 UTC. 14 days before, on 22 March, 09:00 is 08:00 UTC (winter).
+    // 14 × 24 h before would be 22 March 07:00 UTC, an hour too early.
     expect(percent('2027-03-22T08:00:00.000Z', '2027-04-05T07:00:00.000Z')).toBe(100)
     expect(percent('2027-03-22T08:00:00.001Z', '2027-04-05T07:00:00.000Z')).toBe(50)
-    // 14 × 24 h before would be 22 March 07:00 UTC; an hour later still counts as 14 days.
   })
 
   it('counts days on the calendar where the clock is put back in between', () => {
