@@ -1,10 +1,16 @@
 import type { Database } from '#server/db/client'
 
-interface Flight<Output> { running: Promise<unknown>, next: Promise<Output> | undefined }
+const nextTurn = () => new Promise<void>(resolve => setImmediate(resolve))
+
+/** A read that is under way, and one that has been asked for and not begun. */
+interface Flight<Output> { running: Promise<unknown> | undefined, waiting: Promise<Output> | undefined }
 
 /**
- * Lets people who ask for the same thing at the same moment share one query. A query under way is never shared with somebody
- * who asked after it began, so everyone still sees what was committed before they asked; only the waiting ones join.
+ * Lets people who ask for the same thing at the same moment share one query. A query that has begun is never shared with
+ * somebody who asks later, so everyone still sees what was committed before they asked.
+ *
+ * The query begins after the requests that have already arrived were taken in: PGlite answers without giving way to them, so
+ * without that turn each of fifty requests would run a query of its own.
  *
  * @param keyOf names what is asked for; equal keys give equal results
  * @param load reads it; its result is shared, so callers must not change it
@@ -17,21 +23,22 @@ export function sharedRead<Input, Output>(keyOf: (input: Input) => string, load:
     const flights = flightsOf.get(db) ?? new Map<string, Flight<Output>>()
     flightsOf.set(db, flights)
     const key = keyOf(input)
+    const flight = flights.get(key) ?? { running: undefined, waiting: undefined }
+    flights.set(key, flight)
 
-    const start = (): Promise<Output> => {
+    const begin = (): Promise<Output> => {
+      flight.waiting = undefined
       const result = load(db, input)
-      const flight: Flight<Output> = { running: result, next: undefined }
-      flights.set(key, flight)
-      const land = () => {
-        if (flights.get(key) === flight && !flight.next) flights.delete(key)
+      flight.running = result
+      const end = () => {
+        flight.running = undefined
+        if (!flight.waiting) flights.delete(key)
       }
-      result.then(land, land)
+      result.then(end, end)
       return result
     }
 
-    const flight = flights.get(key)
-    if (!flight) return start()
-    flight.next ??= flight.running.then(start, start)
-    return flight.next
+    flight.waiting ??= Promise.resolve(flight.running).then(nextTurn, nextTurn).then(begin)
+    return flight.waiting
   }
 }

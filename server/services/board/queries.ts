@@ -69,7 +69,7 @@ function closedRun({ cryostatId, state, startsAt, endsAt, finishedAt }: BoardRun
   }
 }
 
-function deskOf(actor: Actor, { requests, readings }: BoardRows): BoardDesk {
+function deskOf(actor: Actor, { requests, readings }: Pick<BoardRows, 'requests' | 'readings'>): BoardDesk {
   return {
     requests: can(actor, 'desk:read') ? requests : null,
     readings: readings.map(({ startedAt, ...reading }) => ({

@@ -9,49 +9,68 @@ function controlled() {
   const db = {} as Database
   return { started, read: (key: string) => read(db, key) }
 }
-const settle = () => new Promise(resolve => setImmediate(resolve))
+const immediate = () => new Promise(resolve => setImmediate(resolve))
+/** Long enough for a read that may begin to have begun. */
+const turn = async () => {
+  await immediate()
+  await immediate()
+}
 
 describe('sharedRead', () => {
-  it('shares one query among all who asked while another was under way, and none with that one', async () => {
+  it('shares one query among all who asked before it began', async () => {
+    const { started, read } = controlled()
+    const readers = [read('a'), read('a'), read('a')]
+    await turn()
+    expect(started).toHaveLength(1)
+    started[0]?.finish('board')
+    expect(await Promise.all(readers)).toEqual(['board', 'board', 'board'])
+  })
+
+  it('never shares a query that has begun: later readers wait for it and share the next', async () => {
     const { started, read } = controlled()
     const first = read('a')
-    const waiting = [read('a'), read('a'), read('a')]
+    await turn()
+    const later = [read('a'), read('a')]
+    await turn()
     expect(started).toHaveLength(1)
     started[0]?.finish('before')
     expect(await first).toBe('before')
-    await settle()
+    await turn()
     expect(started).toHaveLength(2)
     started[1]?.finish('after')
-    expect(await Promise.all(waiting)).toEqual(['after', 'after', 'after'])
+    expect(await Promise.all(later)).toEqual(['after', 'after'])
   })
 
-  it('keeps no result: whoever asks later gets a new query', async () => {
+  it('keeps no result', async () => {
     const { started, read } = controlled()
     const first = read('a')
+    await turn()
     started[0]?.finish('one')
     await first
-    await settle()
     const second = read('a')
+    await turn()
     expect(started).toHaveLength(2)
     started[1]?.finish('two')
     expect(await second).toBe('two')
   })
 
-  it('does not pass a failure on to those who waited', async () => {
+  it('does not pass a failure on to those who asked later', async () => {
     const { started, read } = controlled()
     const first = read('a')
+    await turn()
     const second = read('a')
     started[0]?.fail(new Error('lost'))
     await expect(first).rejects.toThrow('lost')
-    await settle()
+    await turn()
     started[1]?.finish('found')
     expect(await second).toBe('found')
   })
 
-  it('reads different things side by side', () => {
+  it('reads different things side by side', async () => {
     const { started, read } = controlled()
     void read('a')
     void read('b')
+    await turn()
     expect(started).toHaveLength(2)
   })
 })
