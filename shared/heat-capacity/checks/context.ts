@@ -5,6 +5,7 @@ import type { Thresholds } from '#shared/heat-capacity/checks/thresholds'
 import type { HandbookEntry } from '#shared/materials/elements'
 import { DomainError } from '#shared/errors'
 import { correlationInflation } from '#shared/heat-capacity/statistics'
+import { termValue } from '#shared/heat-capacity/terms'
 
 /** Everything a check may look at. */
 export interface CheckContext {
@@ -82,6 +83,18 @@ export function carefulError(fit: LowTemperatureFit, term: FitTerm): number {
 export function usedRangeK({ curve, fit }: Pick<CheckContext, 'curve' | 'fit'>): [number, number] {
   const used = fit.usedIndices
   return [curve.temperatureK[used[0]!]!, curve.temperatureK[used[used.length - 1]!]!]
+}
+
+/**
+ * Share of C at the coldest point used that one term takes. With thousands of points a term is significant long before it matters.
+ *
+ * @param context the check's view
+ * @param fit whose term
+ * @param term which
+ */
+export function coldShare({ curve }: Pick<CheckContext, 'curve'>, fit: LowTemperatureFit, term: FitTerm): number {
+  const index = fit.usedIndices[0]!
+  return Math.abs((fit.coefficients[term]?.value ?? 0) * termValue(term, curve.temperatureK[index]!) / curve.heatCapacity[index]!)
 }
 
 /** Conduction electrons and density, from the sample sheet or else the handbook; undefined when one is not known. */

@@ -1,5 +1,5 @@
 import type { Check } from '#shared/heat-capacity/checks/context'
-import { carefulError, figures, frameOf, usedRangeK } from '#shared/heat-capacity/checks/context'
+import { carefulError, coldShare, figures, frameOf, percent, usedRangeK } from '#shared/heat-capacity/checks/context'
 import { formatUncertainty } from '#shared/utils/format-uncertainty'
 
 const frame = frameOf({
@@ -27,6 +27,8 @@ export const electronicTerm: Check = (context) => {
   if (sample.kind === 'insulator') {
     const band = { ...number, band: [-limit, limit] as const }
     if (Math.abs(distance) <= limit) return frame.say('ok', `${value} is zero within ${limit} standard errors, as for an insulator.`, band)
+    const share = coldShare(context, fit, 'gamma')
+    if (share < thresholds.negligibleShare) return frame.say('caution', `${value} is ${apart}, but only ${percent(share)} of C at the coldest point: the model bends away a little from so many points.`, band)
     return frame.say('fail', `${value} is ${apart}, but an insulator has none. ${distance > 0 ? 'It conducts, holds glassy or magnetic parts, or addenda are left in.' : 'The window is too warm, or the model lacks a term.'}`, band)
   }
   if (sample.kind === 'superconductor' && sample.criticalTemperatureK !== undefined && usedRangeK(context)[0] < sample.criticalTemperatureK) {

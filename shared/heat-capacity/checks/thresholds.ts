@@ -30,6 +30,7 @@ export const CHECK_THRESHOLDS = {
   debyeDivisorFail: { value: 10, unit: '', words: 'Θ_D/T_max below which the T³ law has no meaning', source: 'a pure Debye lattice is 4 to 5 % under T³ there (Debye function)', range: [2, 50] },
   constantStandardErrors: { value: 3, unit: 'standard errors', words: 'How far a constant added to the fit may stand from zero', source: PRACTICE, range: [1, 10] },
   constantStandardErrorsFail: { value: 5, unit: 'standard errors', words: 'The same, failing', source: PRACTICE, range: [2, 20] },
+  negligibleShare: { value: 0.02, unit: '', words: 'Share of C at the cold end below which a significant term that should not be there asks for caution only', source: PRACTICE, range: [0, 0.2] },
   classicalShareCaution: { value: 0.1, unit: '', words: 'Highest ordinary share of the classical 3/2 R per mole of electrons', source: 'A. Sommerfeld, Z. Phys. 47, 1 (1928): the share is (π²/3) T/T_F', range: [0.001, 0.5] },
   transitionJump: { value: 0.08, unit: '', words: 'Share of C/T that makes a step a transition', source: PRACTICE, range: [0.01, 0.5] },
   transitionStandardErrors: { value: 6, unit: 'standard errors', words: 'How far a step must stand out of the noise', source: PRACTICE, range: [3, 20] },

@@ -1,5 +1,5 @@
 import type { Check } from '#shared/heat-capacity/checks/context'
-import { carefulError, figures, frameOf, refitIfPossible } from '#shared/heat-capacity/checks/context'
+import { carefulError, coldShare, figures, frameOf, percent, refitIfPossible } from '#shared/heat-capacity/checks/context'
 import { formatUncertainty } from '#shared/utils/format-uncertainty'
 
 const frame = frameOf({
@@ -22,5 +22,7 @@ export const zeroAtZero: Check = (context) => {
   const words = `A constant added to the fit comes out as ${formatUncertainty(constant.value, error).compact} mJ/(mol K)`
   if (Math.abs(distance) <= limit) return frame.say('ok', `${words}, zero within ${limit} standard errors.`, number)
   const where = `${words}, ${figures(Math.abs(distance), 2)} standard errors from zero`
+  const share = coldShare(context, wider, 'constant')
+  if (share < thresholds.negligibleShare) return frame.say('caution', `${where}, but only ${percent(share)} of C at the coldest point. So many points show that the T³ law bends: add β₅T⁵ or lower the warm edge.`, number)
   return frame.say(Math.abs(distance) > thresholds.constantStandardErrorsFail ? 'fail' : 'caution', `${where}. Look for addenda left in, an upturn, or too warm a window.`, number)
 }

@@ -6,7 +6,7 @@ import { CHECK_THRESHOLDS, thresholdsWith } from '#shared/heat-capacity/checks/t
 import type { CheckId } from '#shared/heat-capacity/types'
 import { verdictOf } from '#shared/heat-capacity/verdict'
 import type { Law } from '../../../support/heat-capacity-files'
-import { normals, silverLaw } from '../../../support/heat-capacity-files'
+import { copperLaw, normals, silverLaw } from '../../../support/heat-capacity-files'
 
 const SILVER = { formula: 'Ag', molarMassGPerMol: 107.868, atomsPerFormulaUnit: 1, kind: 'metal' as const }
 
@@ -127,6 +127,20 @@ describe('transition and upturn on sound curves', () => {
   it('false alarms stay rare over 300 noisy files', () => {
     const failed = Array.from({ length: 300 }, (_, seed) => analyse({ curve: curveOf(silverLaw, { seed: seed + 100, noise: 0.02 }) })).filter(each => each.verdict === 'fail')
     expect(failed.length).toBeLessThanOrEqual(9)
+  })
+})
+
+describe('many points', () => {
+  it('make a term that hardly matters a caution, not a failure', () => {
+    const many = { from: 1.2, to: 6.7, points: 20_000, noise: 0.003 }
+    const copper = { formula: 'Cu', molarMassGPerMol: 63.546, atomsPerFormulaUnit: 1, kind: 'metal' as const }
+    const { checks, verdict } = analyse({ curve: curveOf(copperLaw, many), sample: copper, model: { terms: ['gamma', 'beta3'], windowK: [1, 7] } })
+    const constant = checks.find(each => each.id === 'zero-at-zero')!
+    expect(Math.abs(constant.value!)).toBeGreaterThan(5)
+    expect(constant.status).toBe('caution')
+    expect(verdict).toBe('caution')
+    const offset = analyse({ curve: curveOf(t => copperLaw(t) + 0.05, many), sample: copper, model: { terms: ['gamma', 'beta3'], windowK: [1, 7] } })
+    expect(offset.checks.find(each => each.id === 'zero-at-zero')!.status).toBe('fail')
   })
 })
 
