@@ -84,7 +84,7 @@ describe('a day and a time', () => {
   it('names the next time that exists where the clock is put forward, and keeps what was typed', async () => {
     const { wrapper, sent } = await type('2027-03-28', '02:30')
     expect(sent).toEqual([])
-    expect(wrapper.text()).toContain('The next one that does is 03:30.')
+    expect(wrapper.text()).toContain('The next one that does is 03:00.')
     expect(wrapper.findAll('input').map(input => input.element.value)).toEqual(['2027-03-28', '02:30'])
   })
   it('refuses a day that no month has', async () => {

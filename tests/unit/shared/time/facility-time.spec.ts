@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import { DomainError } from '#shared/errors'
-import { addDays, daysBetween, instantOfWallTime, mondayOf, startOfDay, wallTimeOf } from '#shared/time/facility-time'
+import { addDays, daysBetween, instantOfWallTime, instantsOfWallTime, mondayOf, startOfDay, wallTimeOf } from '#shared/time/facility-time'
 
 // Changes of the clock. Oslo: Directive 2000/84/EC, last Sundays of March and October at 01:00 UTC. Lord Howe, Havana and
 // Cairo: IANA time zone database, files australasia, northamerica and africa.
@@ -40,8 +40,12 @@ describe('the instant of a wall time', () => {
   it('refuses a time the clock is put forward over, and names the next', () => {
     const refused = () => at('2027-03-28', '02:30')
     expect(refused).toThrow(DomainError)
-    expect(refused).toThrow('On 2027-03-28 the clock is put forward over 02:30, so this time does not exist. The next one that does is 03:30.')
+    expect(refused).toThrow('On 2027-03-28 the clock is put forward over 02:30, so this time does not exist. The next one that does is 03:00.')
     expect(() => at('2027-03-28', '02:00')).toThrow('The next one that does is 03:00.')
+    expect(() => at('2027-03-28', '02:59')).toThrow('The next one that does is 03:00.')
+    // Cairo: from midnight to 01:00. Apia left out the whole of 30 December 2011 (IANA, australasia).
+    expect(() => at('2027-04-30', '00:20', 'Africa/Cairo')).toThrow('The next one that does is 01:00.')
+    expect(() => at('2011-12-30', '12:00', 'Pacific/Apia')).toThrow('The next one that does is 2011-12-31, 00:00.')
     expect(() => at('2027-03-28', '02:30', OSLO, 'second')).toThrow('does not exist')
   })
 
@@ -53,11 +57,18 @@ describe('the instant of a wall time', () => {
     expect(at('2026-10-25', '03:30', OSLO, 'second')).toBe(at('2026-10-25', '03:30'))
   })
 
+  it('gives all instants of a wall time, for a form to ask which is meant', () => {
+    const all = (date: string, time: string) => instantsOfWallTime({ date, time }, OSLO).map(iso)
+    expect(all('2026-10-25', '02:30')).toEqual(['2026-10-25T00:30:00.000Z', '2026-10-25T01:30:00.000Z'])
+    expect(all('2026-10-25', '03:00')).toEqual(['2026-10-25T02:00:00.000Z'])
+    expect(all('2027-03-28', '02:30')).toEqual([])
+  })
+
   it('knows changes of half an hour', () => {
     // Lord Howe: 2027-04-04 02:00 (UTC+11) back to 01:30 (UTC+10:30); 2027-10-03 02:00 forward to 02:30.
     expect(at('2027-04-04', '01:45', LORD_HOWE, 'first')).toBe('2027-04-03T14:45:00.000Z')
     expect(at('2027-04-04', '01:45', LORD_HOWE, 'second')).toBe('2027-04-03T15:15:00.000Z')
-    expect(() => at('2027-10-03', '02:15', LORD_HOWE)).toThrow('The next one that does is 02:45.')
+    expect(() => at('2027-10-03', '02:15', LORD_HOWE)).toThrow('The next one that does is 02:30.')
     expect(at('2027-10-03', '02:30', LORD_HOWE)).toBe('2027-10-02T15:30:00.000Z')
   })
 
