@@ -26,9 +26,10 @@ export function formatInstant(instant: Date | string, timeZone: string): string 
   return `${formatDay(date)} ${time}`
 }
 
-/** Two days: `4 – 17 May`, `28 Apr – 11 May`, with the year where it changes. */
+/** Two days: `4 – 17 May`, `28 Apr – 11 May`, with the year where it changes; `4 May` where both are one. */
 export function formatDayRange(from: string, to: string): string {
   const [start, end] = [partsOf(from), partsOf(to)]
+  if (from === to) return `${end.day} ${end.month}`
   const startText = start.year !== end.year ? `${start.day} ${start.month} ${start.year}` : start.month !== end.month ? `${start.day} ${start.month}` : String(start.day)
   return `${startText} – ${end.day} ${end.month}${start.year !== end.year ? ` ${end.year}` : ''}`
 }
