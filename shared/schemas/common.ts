@@ -28,15 +28,15 @@ export const textSchema = (longest = 2000) => z.string().trim().max(longest, `En
 
 /** A finite number within limits, with its unit in the sentence. */
 export const quantitySchema = (label: string, unit: string, limits: { above?: number, least?: number, most?: number }) => {
-  const sentence = `Enter ${label} ${describe(limits)} ${unit}`.trim()
+  const sentence = `Enter ${label} ${describe(limits, unit ? ` ${unit}` : '')}`.trim()
   return z.number({ required_error: `${sentence}.`, invalid_type_error: `${sentence}, as a number.` }).finite(`${sentence}.`)
     .refine(value => (limits.above === undefined || value > limits.above) && (limits.least === undefined || value >= limits.least) && (limits.most === undefined || value <= limits.most), `${sentence}.`)
 }
 
-function describe({ above, least, most }: { above?: number, least?: number, most?: number }): string {
-  if (least !== undefined && most !== undefined) return `from ${least} to ${most}`
-  if (above !== undefined && most !== undefined) return `above ${above} and up to ${most}`
-  if (above !== undefined) return `above ${above}`
-  if (least !== undefined) return `of ${least} or more`
-  return most === undefined ? '' : `up to ${most}`
+function describe({ above, least, most }: { above?: number, least?: number, most?: number }, unit: string): string {
+  if (least !== undefined && most !== undefined) return `from ${least} to ${most}${unit}`
+  if (above !== undefined && most !== undefined) return `above ${above} and up to ${most}${unit}`
+  if (above !== undefined) return `above ${above}${unit}`
+  if (least !== undefined) return `of ${least}${unit} or more`
+  return most === undefined ? unit.trim() : `up to ${most}${unit}`
 }
