@@ -24,7 +24,7 @@ const plan = { cryostatId: ':cryostat', groupId: ':group', sampleIds: [':sample'
 const TABLE: Record<string, Row> = {
   'GET /api/board': { may: EVERYONE, query: '?from=2027-01-04&to=2027-01-18' },
   'GET /api/board/month': { may: EVERYONE, query: '?month=2027-01' },
-  'POST /api/closures': { may: ['manager'], body: { cryostatId: uuid, startsAt: now, endsAt: '2030-01-01T00:00:00Z', reason: 'x' } },
+  'POST /api/closures': { may: ['manager'], body: { cryostatId: ':cryostat', startsAt: now, endsAt: '2030-01-01T00:00:00Z', reason: 'x' } },
   'DELETE /api/closures/:closure': { may: ['manager'] },
   'GET /api/cryostats': { may: EVERYONE },
   'GET /api/cryostats/:slug': { may: EVERYONE },

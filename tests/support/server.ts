@@ -1,5 +1,5 @@
 import { spawn, type ChildProcess } from 'node:child_process'
-import { cpSync, existsSync, mkdirSync, mkdtempSync, readFileSync, renameSync, rmSync } from 'node:fs'
+import { cpSync, existsSync, mkdirSync, mkdtempSync, readdirSync, readFileSync, renameSync, rmSync, statSync } from 'node:fs'
 import { tmpdir } from 'node:os'
 import { join } from 'node:path'
 import { fileURLToPath } from 'node:url'
@@ -37,13 +37,16 @@ export interface StartedServer extends TestServer {
 /** Seeds once for all files and runs of a day; a change of the seed, the schema or the domain seeds anew. */
 async function seededFolder(): Promise<string> {
   const key = hashOf(['server/db', 'server/services', 'server/adapters', 'shared', 'scripts/seed.ts', 'drizzle']).slice(0, 16)
-  const cache = join(root, 'node_modules/.cache/holdtime-seed', `${new Date().toISOString().slice(0, 10)}-${key}`)
+  const folder = join(root, 'node_modules/.cache/holdtime-seed')
+  const cache = join(folder, `${new Date().toISOString().slice(0, 10)}-${key}`)
   if (!existsSync(cache)) {
+    for (const name of existsSync(folder) ? readdirSync(folder) : []) if (statSync(join(folder, name)).mtimeMs < Date.now() - 86_400_000) rmSync(join(folder, name), { recursive: true, force: true })
     const building = `${cache}.${process.pid}`
-    rmSync(join(root, 'node_modules/.cache/holdtime-seed'), { recursive: true, force: true })
     mkdirSync(building, { recursive: true })
     await runToEnd(process.execPath, [...tsx, join(root, 'scripts/seed.ts')], { ...serverEnvironment(building, 1, { payments: 1, smtp: 1 }), ...tsxEnvironment })
-    renameSync(building, cache)
+    // Another run may have been quicker; either copy is the same.
+    if (existsSync(cache)) rmSync(building, { recursive: true })
+    else renameSync(building, cache)
   }
   return cache
 }

@@ -55,6 +55,6 @@ export async function seedDemo(db: Database, { seed, now, files, fonts }: SeedOp
   await seedClosures(db, facility, people.managerId, now)
   await seedDeposits(db, [...past, ...running])
   await seedInvoices(db, past, { files, fonts }, now)
-  await seedResults(db, past, { files, random, people, now })
+  await seedResults(db, past, { files, random, now })
   return { signIns: people.signIns, runCount: past.length + running.length }
 }

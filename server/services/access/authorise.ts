@@ -1,4 +1,4 @@
-import { can } from '#shared/access/rules'
+import { ACTIONS, can } from '#shared/access/rules'
 import type { AccessObject, Action, Actor } from '#shared/access/rules'
 import { DomainError } from '#shared/errors'
 
@@ -16,8 +16,8 @@ const checked = new WeakSet<Actor>()
 export function authorise(actor: Actor, action: Action, object: AccessObject = {}): void {
   checked.add(actor)
   if (can(actor, action, object)) return
-  const read = `${action.slice(0, action.indexOf(':'))}:read` as Action
-  if (read !== action && can(actor, read, object)) {
+  const read = ACTIONS.find(candidate => candidate === `${action.slice(0, action.indexOf(':'))}:read`)
+  if (read && read !== action && can(actor, read, object)) {
     throw new DomainError('not-allowed', 'Your role does not allow this. Ask the facility\'s manager.')
   }
   throw new DomainError('not-found', 'There is nothing here, or it is not yours to see.')

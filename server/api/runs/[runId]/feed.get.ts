@@ -10,6 +10,8 @@ const KEEP_ALIVE_MS = 25_000
 export default defineApi({ access: 'run:read', params: runParams }, async ({ event, db, actor, params }) => {
   await readRun(db, { runId: params.runId, actor })
   const stream = createEventStream(event)
+  // A reader that is gone has no socket left, and the server's idle count would look for it when the answer ends.
+  event.node.req.once('close', () => event.node.res.removeAllListeners('finish'))
   const stopListening = onRunChange(params.runId, () => void stream.push({ event: 'changed', data: params.runId }))
   const keepAlive = setInterval(() => void stream.push({ event: 'alive', data: '' }), KEEP_ALIVE_MS)
   stream.onClosed(async () => {
