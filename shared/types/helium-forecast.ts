@@ -5,8 +5,8 @@ export interface StockPoint { at: string, litres: number }
 export interface StockBandPoint extends StockPoint { low: number, high: number }
 
 /** A forecast of one kind, with when it falls under the reserve. */
-export interface StockForecast {
-  points: StockBandPoint[]
+export interface StockForecast<Point extends StockPoint = StockPoint> {
+  points: Point[]
   /** First instant under the reserve: likely, and at the low end of the band. */
   likelyShortAt: string | null
   lowShortAt: string | null
@@ -23,7 +23,7 @@ export interface HeliumForecastReply {
   /** For people with a facility role. */
   detail: {
     onHandLitres: number
-    held: StockForecast
+    held: StockForecast<StockBandPoint>
     /** As if every asked run went as well. */
     allAsked: StockForecast
     askedCount: number

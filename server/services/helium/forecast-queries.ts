@@ -2,7 +2,7 @@ import { can, type Actor } from '#shared/access/rules'
 import { forecastSentence } from '#shared/helium/forecast-sentence'
 import { forecastStock, type ForecastInput, type ForecastPoint, type HeliumForecast } from '#shared/helium/forecast'
 import { forecastRun } from '#shared/planning/forecast-run'
-import type { HeliumForecastReply, StockForecast, StockPoint } from '#shared/types/helium-forecast'
+import type { HeliumForecastReply, StockBandPoint, StockForecast, StockPoint } from '#shared/types/helium-forecast'
 import { heliumLitresFromMg } from '#shared/units/helium-units'
 import type { Database } from '#server/db/client'
 import type { DayRange } from '#server/db/day-range'
@@ -70,8 +70,8 @@ const readStrip = sharedRead<DayRange, HeliumForecastReply>(({ from, to }) => `$
     detail: input && held
       ? {
           onHandLitres: round(input.stockLitres),
-          held: toStockForecast(held, rows, fromMs),
-          allAsked: toStockForecast(forecastStock({ ...input, mode: 'all-asked' }), rows, fromMs),
+          held: toStockForecast(held, rows, fromMs, toBandPoint),
+          allAsked: toStockForecast(forecastStock({ ...input, mode: 'all-asked' }), rows, fromMs, toStockPoint),
           askedCount: input.runs.filter(run => !run.held).length,
           deliveries: rows.deliveries.map(delivery => ({ ...delivery, isOverdue: Date.parse(delivery.dueAt) < range.now.getTime() })),
         }
@@ -100,9 +100,9 @@ function fromDay(points: readonly ForecastPoint[], fromMs: number): readonly For
   return first <= 0 ? points : points.slice(first - 1)
 }
 
-function toStockForecast(forecast: HeliumForecast, { reserveLitres, timeZone }: StockRows, fromMs: number): StockForecast {
+function toStockForecast<Point extends StockPoint>(forecast: HeliumForecast, { reserveLitres, timeZone }: StockRows, fromMs: number, toPoint: (point: ForecastPoint) => Point): StockForecast<Point> {
   return {
-    points: fromDay(forecast.points, fromMs).map(point => ({ ...toStockPoint(point), low: round(point.lowLitres), high: round(point.highLitres) })),
+    points: fromDay(forecast.points, fromMs).map(toPoint),
     likelyShortAt: toInstant(forecast.likelyShortMs),
     lowShortAt: toInstant(forecast.lowShortMs),
     sentence: forecastSentence(forecast, reserveLitres, timeZone),
@@ -112,3 +112,4 @@ function toStockForecast(forecast: HeliumForecast, { reserveLitres, timeZone }: 
 const round = (litres: number) => Math.round(litres * 10) / 10
 const toInstant = (atMs: number | undefined) => atMs === undefined ? null : new Date(atMs).toISOString()
 const toStockPoint = ({ atMs, likelyLitres }: ForecastPoint): StockPoint => ({ at: new Date(atMs).toISOString(), litres: round(likelyLitres) })
+const toBandPoint = (point: ForecastPoint): StockBandPoint => ({ ...toStockPoint(point), low: round(point.lowLitres), high: round(point.highLitres) })

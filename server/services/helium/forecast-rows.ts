@@ -21,6 +21,9 @@ export interface StockRows {
 /** A range with the instants at which it starts and ends. */
 export interface StockRowsInRange extends StockRows { fromAt: string, toAt: string }
 
+/** Asked as a list, so that the few movements of the range are looked up by their index instead of joining all there ever were. */
+const dewars = sql`array(select id from helium_accounts where kind = 'dewar')`
+
 /**
  * Reads stock, its recent changes, plans and deliveries in one round trip.
  *
@@ -33,12 +36,12 @@ export async function readStockRows(db: Database, range: DayRange): Promise<Stoc
     with range as (${facilityDayRange(range)})
     select json_build_object(
       'timeZone', range.time_zone, 'reserveLitres', range.reserve_litres, 'fromAt', ${isoInstant(sql`range.from_at`)}, 'toAt', ${isoInstant(sql`range.to_at`)},
-      'stockMg', (select coalesce(sum(posting.amount_mg), 0) from helium_postings posting join helium_accounts account on account.id = posting.account_id where account.kind = 'dewar'),
+      'stockMg', (select coalesce(sum(amount_mg), 0) from helium_postings where account_id = any(${dewars})),
       'changes', (
-        select coalesce(json_agg(json_build_object('at', ${isoInstant(sql`change.at`)}, 'amountMg', change.amount_mg) order by change.at), '[]')
-        from (select movement.at, sum(posting.amount_mg) as amount_mg
-          from helium_movements movement join helium_postings posting on posting.movement_id = movement.id join helium_accounts account on account.id = posting.account_id
-          where account.kind = 'dewar' and movement.at >= range.from_at group by movement.at) change),
+        select coalesce(json_agg(json_build_object('at', ${isoInstant(sql`movement.at`)}, 'amountMg', change.amount_mg) order by movement.at, movement.id), '[]')
+        from helium_movements movement
+        cross join lateral (select sum(amount_mg) as amount_mg from helium_postings where movement_id = movement.id and account_id = any(${dewars})) change
+        where movement.at >= range.from_at and change.amount_mg <> 0),
       'runs', (
         select coalesce(json_agg(json_build_object('runId', id, 'held', state <> 'asked', 'startsAt', ${isoInstant(sql`coalesce(started_at, lower(slot))`)}, 'phases', estimate -> 'phases')), '[]')
         from runs where state in ('asked', 'approved', 'confirmed', 'running') and upper(slot) > ${range.now.toISOString()}::timestamptz),
