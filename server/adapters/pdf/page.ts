@@ -6,24 +6,35 @@ export interface PdfFonts { regular: Buffer, medium: Buffer, semiBold: Buffer }
 /** Faces by name. */
 export type Face = 'regular' | 'medium' | 'semiBold'
 
+/** How a text is set; with a width it is broken into lines. */
+export interface TextStyle { face?: Face, size?: number, color?: string, width?: number, align?: 'left' | 'right' }
+
 /** Ink, grey and line of printed papers; the screen's day colours. */
-export const PRINT = { ink: '#17212b', muted: '#5a6772', line: '#b9b3a4', cold: '#122f57', ember: '#b8502a' } as const
+export const PRINT = { ink: '#17212b', muted: '#5a6772', line: '#ddd8cc', lineStrong: '#b9b3a4', tint: '#f6f4ee', cold: '#122f57', helium: '#7fb4cc', ember: '#b8502a', onCold: '#fffefb' } as const
 
 /** A4 with margins, points. */
-export const PAGE = { width: 595.28, height: 841.89, left: 56, right: 56, top: 52, bottom: 64 } as const
+export const PAGE = { width: 595.28, height: 841.89, left: 56, right: 56, top: 52, bottom: 72 } as const
 
 /** Width between the margins, points. */
 export const TEXT_WIDTH = PAGE.width - PAGE.left - PAGE.right
 
+/** Right edge of the text, points. */
+export const RIGHT = PAGE.width - PAGE.right
+
+/** Lowest place for text above the footer, points. */
+export const FLOOR = PAGE.height - PAGE.bottom
+
+const BODY_SIZE = 9.5
+
 /**
- * Opens a paper: A4, our fonts, tagged title and language, a fixed date so that the same facts give the same bytes.
+ * Opens a paper: A4, our fonts, title and language, a fixed date so that the same facts give the same bytes.
  *
  * @param fonts faces to embed
  * @param info title, author and the paper's own date
  */
 export function openPaper(fonts: PdfFonts, info: { title: string, author: string, date: Date }): PDFKit.PDFDocument {
   const doc = new PDFDocument({
-    size: 'A4', margins: { top: PAGE.top, bottom: 0, left: PAGE.left, right: PAGE.right }, bufferPages: true, lang: 'en', displayTitle: true,
+    size: 'A4', margins: { top: PAGE.top, bottom: 0, left: PAGE.left, right: PAGE.right }, bufferPages: true, pdfVersion: '1.7', lang: 'en', displayTitle: true,
     info: { Title: info.title, Author: info.author, Producer: 'Holdtime', Creator: 'Holdtime', CreationDate: info.date, ModDate: info.date },
   })
   doc.registerFont('regular', fonts.regular)
@@ -33,20 +44,58 @@ export function openPaper(fonts: PdfFonts, info: { title: string, author: string
 }
 
 /** Text at a place, in a face, size and colour. */
-export function put(doc: PDFKit.PDFDocument, text: string, x: number, y: number, style: { face?: Face, size?: number, color?: string, width?: number, align?: 'left' | 'right' } = {}) {
-  doc.font(style.face ?? 'regular').fontSize(style.size ?? 9.5).fillColor(style.color ?? PRINT.ink)
-    .text(text, x, y, { width: style.width, align: style.align ?? 'left', lineBreak: style.width !== undefined })
+export function put(doc: PDFKit.PDFDocument, text: string, x: number, y: number, style: TextStyle = {}) {
+  setType(doc, style).fillColor(style.color ?? PRINT.ink).text(text, x, y, { width: style.width, align: style.align ?? 'left', lineBreak: style.width !== undefined })
 }
 
-/** A hairline across the text width. */
-export function rule(doc: PDFKit.PDFDocument, y: number, weight = 0.5, color: string = PRINT.line) {
-  doc.moveTo(PAGE.left, y).lineTo(PAGE.width - PAGE.right, y).lineWidth(weight).strokeColor(color).stroke()
+/** Text that ends at a right edge. */
+export function putRight(doc: PDFKit.PDFDocument, text: string, right: number, y: number, style: Omit<TextStyle, 'align' | 'width'> = {}) {
+  setType(doc, style)
+  put(doc, text, right - doc.widthOfString(text), y, style)
+}
+
+/** Height of a text broken into lines of a width, points. */
+export function heightOf(doc: PDFKit.PDFDocument, text: string, style: TextStyle & { width: number }): number {
+  return setType(doc, style).heightOfString(text, { width: style.width })
+}
+
+function setType(doc: PDFKit.PDFDocument, style: TextStyle): PDFKit.PDFDocument {
+  return doc.font(style.face ?? 'regular').fontSize(style.size ?? BODY_SIZE)
+}
+
+/** A line across the text, or from one place to another. */
+export function rule(doc: PDFKit.PDFDocument, y: number, style: { weight?: number, color?: string, from?: number, to?: number } = {}) {
+  doc.moveTo(style.from ?? PAGE.left, y).lineTo(style.to ?? RIGHT, y).lineWidth(style.weight ?? 0.5).strokeColor(style.color ?? PRINT.lineStrong).stroke()
+}
+
+/** A filled panel with the corners of the screen's cards. */
+export function panel(doc: PDFKit.PDFDocument, box: { x: number, y: number, width: number, height: number }, color: string = PRINT.tint) {
+  doc.roundedRect(box.x, box.y, box.width, box.height, 4).fill(color)
 }
 
 /** The mark: a basin with its ember at the floor. */
 export function mark(doc: PDFKit.PDFDocument, x: number, y: number) {
-  doc.moveTo(x, y).lineTo(x + 4, y).bezierCurveTo(x + 8, y, x + 8, y + 14, x + 14, y + 14).bezierCurveTo(x + 20, y + 14, x + 20, y, x + 24, y).lineTo(x + 28, y).lineWidth(2).strokeColor(PRINT.cold).stroke()
-  doc.circle(x + 14, y + 14, 2.4).fill(PRINT.ember)
+  doc.moveTo(x, y).lineTo(x + 4, y).bezierCurveTo(x + 12, y, x + 9, y + 16, x + 15, y + 16).bezierCurveTo(x + 21, y + 16, x + 18, y, x + 26, y).lineTo(x + 30, y).lineWidth(2).lineCap('round').strokeColor(PRINT.cold).stroke()
+  doc.lineCap('butt').circle(x + 15, y + 16, 2.5).fill(PRINT.ember)
+}
+
+/**
+ * The foot of every page: who sent it, what it is, page of pages. Done last, when the pages are known.
+ *
+ * @param doc the paper
+ * @param title what the paper is
+ * @param sender one line about who sends it
+ */
+export function putFeet(doc: PDFKit.PDFDocument, title: string, sender: string) {
+  const { start, count } = doc.bufferedPageRange()
+  const style = { size: 8, color: PRINT.muted }
+  for (let page = start; page < start + count; page += 1) {
+    doc.switchToPage(page)
+    const y = FLOOR + 24
+    rule(doc, y - 8)
+    put(doc, sender, PAGE.left, y, style)
+    putRight(doc, `${title}  ·  page ${page + 1} of ${count}`, RIGHT, y, style)
+  }
 }
 
 /** Closes the paper and gives its bytes. */

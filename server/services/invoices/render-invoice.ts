@@ -26,11 +26,17 @@ export async function keepInvoicePaper(db: Database, tools: PaperTools, invoiceI
   if (!row) return
   const lines = await db.select().from(invoiceLines).where(eq(invoiceLines.invoiceId, invoiceId)).orderBy(invoiceLines.position)
   const { timeZone } = await readFacility(db)
-  const file = await tools.files.putFile(await renderInvoicePdf({ invoice: row.invoice, lines, run: row.run, cryostat: row.cryostat, timeZone }, tools.fonts))
+  const corrects = row.invoice.correctsInvoiceId ? await findCorrected(db, row.invoice.correctsInvoiceId) : null
+  const file = await tools.files.putFile(await renderInvoicePdf({ invoice: row.invoice, lines, run: row.run, cryostat: row.cryostat, timeZone, corrects }, tools.fonts))
   await db.transaction(async (tx) => {
     const [written] = await tx.insert(invoiceDocuments).values({ invoiceId, fileKey: file.key, sha256: file.sha256, bytes: file.bytes }).onConflictDoNothing().returning()
     if (written) await whenKept?.(tx, row)
   })
+}
+
+async function findCorrected(db: Database, invoiceId: string) {
+  const [corrected] = await db.select({ number: invoices.number, issuedOn: invoices.issuedOn }).from(invoices).where(eq(invoices.id, invoiceId))
+  return corrected ?? null
 }
 
 /**
