@@ -18,8 +18,20 @@ it('delivers a mail with its attachment to the mail fake', async () => {
   expect(received?.text).toContain('Θ_D, γ')
 })
 
-it('sends nothing whose header holds a line break', async () => {
+it.each([
+  ['subject', { subject: 'Run\r\nBcc: everyone@alder.example' }],
+  ['address', { to: 'a@alder.example\nBcc: everyone@alder.example' }],
+  ['message id', { messageId: 'two@holdtime>\r\nX-Other: 1' }],
+  ['file name', { attachments: [{ filename: 'a.pdf\r\nX-Other: 1', content: Buffer.from(''), contentType: 'application/pdf' }] }],
+])('sends nothing whose %s holds a line break', async (_, changes) => {
   const mail = connectMail({ smtpUrl: `smtp://127.0.0.1:${fake.smtpPort}`, from: 'desk@skerry.example' })
-  await expect(mail.send({ to: 'a@alder.example', subject: 'Run\r\nBcc: everyone@alder.example', text: '', messageId: 'two@holdtime' })).rejects.toThrow('line break')
+  await expect(mail.send({ to: 'a@alder.example', subject: 'Run 0218', text: '', messageId: 'two@holdtime', ...changes })).rejects.toMatchObject({ code: 'invalid', message: expect.stringContaining('line break') })
   mail.close()
+  expect(await (await fetch(`http://127.0.0.1:${fake.webPort}/api/email`)).json()).toHaveLength(1)
+})
+
+it('shows only its own mail, not that of another fake', async () => {
+  const other = await startMailFake({ smtpPort: await freePort(), webPort: await freePort() })
+  expect(await (await fetch(`http://127.0.0.1:${other.webPort}/api/email`)).json()).toEqual([])
+  await other.close()
 })

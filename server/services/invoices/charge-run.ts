@@ -45,16 +45,20 @@ async function findDeposit(db: Database, runId: string): Promise<Payment | undef
   return deposit
 }
 
-async function settle(db: Database, invoice: Invoice, reason: string, now: Date) {
+async function settle(db: Database, invoice: Invoice, reason: string, now: Date, chargedMinor = 0) {
   await db.transaction(async (tx) => {
     const [run] = await tx.select().from(runs).where(eq(runs.id, invoice.runId)).for('update')
-    if (run?.state === 'finished') await changeRunState(tx, { run, step: 'settle', actorId: null, reason, now })
+    if (run?.state !== 'finished') return
+    const settled = await changeRunState(tx, { run, step: 'settle', actorId: null, reason, now })
+    if (chargedMinor > 0) await queueRunMail(tx, 'balance-paid', settled, { amountMinor: chargedMinor })
   })
 }
 
 async function chargeBalance(db: Database, provider: Payments, input: { invoice: Invoice, deposit: Payment | undefined, now: Date }) {
   const { invoice, deposit, now } = input
   const payment = await storeBalance(db, invoice)
+  // Charged by a process that died before it could settle the run.
+  if (payment.state === 'succeeded') return settle(db, invoice, 'The balance was paid.', now, payment.amountMinor)
   if (payment.state !== 'open' || payment.sessionId) return
   if (!deposit?.intentId) return fail(db, payment, 'No card was saved with a deposit.')
   const outcome = await provider.chargeSavedCard({
@@ -63,7 +67,7 @@ async function chargeBalance(db: Database, provider: Payments, input: { invoice:
   if (outcome.state === 'declined') return fail(db, payment, outcome.reason)
   if (outcome.state === 'succeeded') {
     await db.update(payments).set({ state: 'succeeded', intentId: outcome.intentId, settledAt: now }).where(eq(payments.id, payment.id))
-    return settle(db, invoice, 'The balance was charged to the saved card.', now)
+    return settle(db, invoice, 'The balance was charged to the saved card.', now, payment.amountMinor)
   }
   await askForConfirmation(db, provider, { payment, reason: outcome.reason, now })
 }

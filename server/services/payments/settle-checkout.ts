@@ -35,7 +35,9 @@ async function succeed(tx: Database, payment: typeof payments.$inferSelect, chec
   const [run] = await tx.select().from(runs).where(eq(runs.id, payment.runId)).for('update')
   if (checkout.customerId) await tx.update(groups).set({ paymentCustomerId: checkout.customerId }).where(eq(groups.id, run!.groupId))
   if (payment.kind === 'balance') {
-    if (run!.state === 'finished') await changeRunState(tx, { run: run!, step: 'settle', actorId: null, reason: 'The balance was paid.', now })
+    if (run!.state !== 'finished') return
+    const settled = await changeRunState(tx, { run: run!, step: 'settle', actorId: null, reason: 'The balance was paid.', now })
+    await queueRunMail(tx, 'balance-paid', settled, { amountMinor: payment.amountMinor })
     return
   }
   if (run!.state !== 'approved') {
@@ -44,6 +46,6 @@ async function succeed(tx: Database, payment: typeof payments.$inferSelect, chec
     return
   }
   const confirmed = await changeRunState(tx, { run: run!, step: 'confirm', actorId: null, reason: 'The deposit was paid.', now })
-  await queueRunMail(tx, 'confirmed', confirmed)
+  await queueRunMail(tx, 'confirmed', confirmed, { amountMinor: payment.amountMinor })
   for (const loser of await findLosers(tx, confirmed)) await queueRunMail(tx, 'lost-days', loser)
 }
