@@ -18,9 +18,9 @@ export default defineNuxtConfig({
       link: [{ rel: 'icon', type: 'image/svg+xml', href: '/mark.svg' }],
     },
   },
+  dir: { app: 'app' },
 
   srcDir: '.',
-  dir: { app: 'app' },
   // Server sources are compiled by Nitro, not scanned as pages or components.
   ignore: ['tests/**', 'scripts/**', '.ci/**'],
 

@@ -1,4 +1,5 @@
 import { TZDate, tzOffset } from '@date-fns/tz'
+import { addDays as addCalendarDays, differenceInCalendarDays, formatISO, startOfISOWeek } from 'date-fns'
 import { DomainError } from '#shared/errors'
 
 /** A wall-clock day and time as read off a facility's clock. */
@@ -82,19 +83,21 @@ export function startOfDay(date: string, timeZone: string): Date {
   throw new DomainError('invalid', 'This is not a date. Enter a date such as 2027-05-04.', ['date'])
 }
 
+// Calendar days are counted at noon in UTC, where no clock changes.
+const noonOf = (date: string) => new TZDate(`${date}T12:00:00Z`, 'UTC')
+const dayOf = (instant: Date) => formatISO(instant, { representation: 'date' })
+
 /** The day so many days later (or earlier), as a calendar counts. */
 export function addDays(date: string, days: number): string {
-  const at = new Date(`${date}T12:00:00Z`)
-  at.setUTCDate(at.getUTCDate() + days)
-  return at.toISOString().slice(0, 10)
+  return dayOf(addCalendarDays(noonOf(date), days))
 }
 
-/** Monday of the week of a day. */
+/** Monday of the week of a day (ISO 8601 weeks). */
 export function mondayOf(date: string): string {
-  return addDays(date, -((new Date(`${date}T12:00:00Z`).getUTCDay() + 6) % 7))
+  return dayOf(startOfISOWeek(noonOf(date)))
 }
 
 /** Whole days from one day to another. */
 export function daysBetween(from: string, to: string): number {
-  return Math.round((Date.parse(`${to}T12:00:00Z`) - Date.parse(`${from}T12:00:00Z`)) / 86_400_000)
+  return differenceInCalendarDays(noonOf(to), noonOf(from))
 }

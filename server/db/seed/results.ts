@@ -9,6 +9,7 @@ import { mapDataset } from '#server/services/results/map-dataset'
 import { saveAnalysis } from '#server/services/results/save-analysis'
 import { signOff } from '#server/services/results/sign-off'
 import { uploadDataset } from '#server/services/results/upload-dataset'
+import { MODEL_TERMS } from '#shared/schemas/heat-capacity'
 import { copperReferenceHeatCapacity, COPPER_REFERENCE_RANGE_K } from '#shared/materials/copper-reference'
 import type { Random } from './random'
 import type { SeededRun } from './runs'
@@ -55,7 +56,7 @@ async function seedResult(db: Database, { run, spec, group }: SeededRun, { files
   const [dataset] = await db.select().from(datasets).where(eq(datasets.id, datasetId))
   const curve = { temperatureK: dataset!.temperatureK ?? [], heatCapacity: dataset!.heatCapacity ?? [], sigma: dataset!.sigma ?? undefined }
   const advice = adviseWindow(curve, { atomsPerFormulaUnit: sample.atomsPerFormulaUnit })
-  const terms = sample.tail ? ['gamma', 'beta3', 'tail'] as const : advice.terms
+  const terms = sample.tail ? ['gamma', 'beta3', 'tail'] as const : MODEL_TERMS.filter(term => advice.terms.includes(term))
   await saveAnalysis(db, { datasetId, actor, model: { terms: [...terms], windowK: [...(sample.tail ? [spec.temperatureLowK, 9] as const : advice.windowK)] }, now: new Date(run.finishedAt!.getTime() + 3_600_000) })
 }
 

@@ -79,4 +79,3 @@ async function toRequest(db: Database, item: Desk['running'][number], request: O
     stockAfter: request.usesLiquid && after ? { likely: after.likelyLitres, low: after.lowLitres } : null,
   }
 }
-

@@ -4,7 +4,8 @@ import { heliumMgFromLitres, heliumLitresFromMg, MS_PER_HOUR } from '#shared/uni
 import { runHeliumUse } from '#shared/helium/run-use'
 import { median } from '#shared/helium/boil-off'
 import type { Database } from '#server/db/client'
-import { cryostats, runEntries, runs } from '#server/db/schema'
+import type { cryostats } from '#server/db/schema'
+import { runEntries, runs } from '#server/db/schema'
 import { toHeliumLog } from '#server/services/run-log/helium-log'
 
 /** Runs further back than this teach no more than those before them. */
