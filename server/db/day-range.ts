@@ -19,3 +19,8 @@ export function facilityDayRange({ from, to, now }: DayRange): SQL {
     cross join lateral (select beginning.first_day, coalesce(${to}::date, beginning.first_day + ${USUAL_DAYS}::int) as last_day) days
     limit 1`
 }
+
+/** Names a range for readers who share it: its days and the minute, since what is shown of a range also depends on the time. */
+export function dayRangeKey({ from, to, now }: DayRange): string {
+  return `${from}/${to}/${Math.floor(now.getTime() / 60_000)}`
+}

@@ -102,3 +102,13 @@ export function daysTouched(scale: BoardScale, startMs: number, endMs: number): 
   if (first === -1) return undefined
   return { first, last: scale.days.findLastIndex(day => day.startMs < endMs) }
 }
+
+/**
+ * A share as a CSS percentage, as fine as a screen shows.
+ *
+ * @param share share of the width
+ * @returns e.g. `12.345%`
+ */
+export function percentOf(share: number): string {
+  return `${Math.round(share * 1e5) / 1e3}%`
+}

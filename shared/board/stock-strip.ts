@@ -75,3 +75,28 @@ export function stockAtMs(points: readonly StripPoint[], atMs: number): number |
   if (!to) return from.atMs === atMs ? from.litres : undefined
   return from.litres + (to.litres - from.litres) * (atMs - from.atMs) / (to.atMs - from.atMs)
 }
+
+/**
+ * Leaves out points that straight lines between their neighbours replace.
+ *
+ * @param points in order of time; every number but `atMs` is litres
+ * @param toleranceLitres farthest that a left-out point may lie off the line
+ * @returns the first, the last, and every point where the line bends or steps
+ */
+export function thinPoints<Point extends Readonly<Record<string, number>> & { readonly atMs: number }>(points: readonly Point[], toleranceLitres: number): Point[] {
+  const kept: Point[] = []
+  let from = 0
+  const liesBetween = (point: Point, start: Point, end: Point) => Object.keys(point).every((key) => {
+    const share = (point.atMs - start.atMs) / (end.atMs - start.atMs)
+    return key === 'atMs' || Math.abs((start[key] ?? 0) + share * ((end[key] ?? 0) - (start[key] ?? 0)) - (point[key] ?? 0)) <= toleranceLitres
+  })
+  points.forEach((point, index) => {
+    const [start, end] = [points[from], points[index + 1]]
+    const isStep = end?.atMs === point.atMs || points[index - 1]?.atMs === point.atMs
+    const replaced = start && end && index > from && !isStep && points.slice(from + 1, index + 1).every(between => liesBetween(between, start, end))
+    if (replaced) return
+    kept.push(point)
+    from = index
+  })
+  return kept
+}

@@ -78,6 +78,23 @@ describe.each(DRIVERS)('the board, on %s', (driver) => {
     expect(board.desk?.readings).toMatchObject([{ dueAt: '2027-05-03T11:00:00.000Z', last: { levelPercent: 61, boilOffLitresPerHour: 0.42, outsideUsual: false } }])
   })
 
+  it('shows a change at once, also one whose transaction was open while the board was read', async () => {
+    const read = async () => (await readBoard(open.db, { actor: actorOf('operator'), from: '2027-06-07', to: '2027-06-21', now: range.now })).runs.map(run => run.number)
+    expect(await read()).toEqual([])
+    const first = await insertTestRun(open.db, alder, 'asked', '2027-06-08T08:00Z', '2027-06-10T08:00Z')
+    expect(await read()).toEqual([first.number])
+    // PGlite has one session, which an open transaction holds.
+    const second = await open.db.transaction(async (tx) => {
+      const run = await insertTestRun(tx, alder, 'asked', '2027-06-11T08:00Z', '2027-06-12T08:00Z')
+      if (driver === 'postgres') expect(await read()).toEqual([first.number])
+      return run
+    })
+    expect(await read()).toEqual([first.number, second.number])
+    await open.db.update(runs).set({ state: 'withdrawn' }).where(eq(runs.id, first.id))
+    expect(await read()).toEqual([second.number])
+    await open.db.update(runs).set({ state: 'withdrawn' }).where(eq(runs.id, second.id))
+  })
+
   it('shows two weeks from the facility\'s Monday when nobody says which days', async () => {
     // Sunday 23:30 UTC is Monday in Oslo.
     const board = await readBoard(open.db, { actor: actorOf('operator'), now: new Date('2027-05-09T23:30:00Z') })

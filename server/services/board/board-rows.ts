@@ -2,7 +2,7 @@ import { sql } from 'drizzle-orm'
 import type { Board, BoardClosure, BoardLane, BoardRun, DueReading, WaitingRequest } from '#shared/types/board'
 import type { PhaseId } from '#shared/planning/types'
 import type { Database } from '#server/db/client'
-import { facilityDayRange, type DayRange } from '#server/db/day-range'
+import { dayRangeKey, facilityDayRange, type DayRange } from '#server/db/day-range'
 import { isoInstant } from '#server/db/iso-instant'
 import { sharedRead } from '#server/utils/shared-read'
 
@@ -36,7 +36,7 @@ const endsAt = isoInstant(sql`upper(run.slot)`)
  * Reads the board in one round trip: the database builds the JSON, so that a request costs one statement whatever it shows.
  * People who ask at the same moment share it.
  */
-export const readBoardRows = sharedRead<DayRange, BoardRows>(({ from, to }) => `${from}/${to}`, loadBoardRows)
+export const readBoardRows = sharedRead<DayRange, BoardRows>(dayRangeKey, loadBoardRows)
 
 async function loadBoardRows(db: Database, range: DayRange): Promise<BoardRows> {
   const { rows } = await db.execute(sql`

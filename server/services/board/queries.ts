@@ -43,7 +43,7 @@ function openRun({ groupId: _, ownerId: __, finishedAt, logged, ...run }: BoardR
   const asRun = phasesAsRun(run.phases, logged.map(({ phase, at }) => ({ phase, atMs: Date.parse(at) })), ended)
   return {
     ...run,
-    phases: asRun.phases,
+    phases: asRun.phases.map(({ phase, hours }) => ({ phase, hours: Math.round(hours * 100) / 100 })),
     phasesStartAt: asRun.startMs === undefined ? run.startsAt : new Date(asRun.startMs).toISOString(),
     // A run that is over gave back the rest of its days.
     endsAt: finishedAt !== null && finishedAt < run.endsAt ? finishedAt : run.endsAt,

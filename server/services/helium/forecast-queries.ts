@@ -1,11 +1,12 @@
 import { can, type Actor } from '#shared/access/rules'
+import { thinPoints } from '#shared/board/stock-strip'
 import { forecastSentence } from '#shared/helium/forecast-sentence'
 import { forecastStock, type ForecastInput, type ForecastPoint, type HeliumForecast } from '#shared/helium/forecast'
 import { forecastRun } from '#shared/planning/forecast-run'
 import type { HeliumForecastReply, StockBandPoint, StockForecast, StockPoint } from '#shared/types/helium-forecast'
 import { heliumLitresFromMg } from '#shared/units/helium-units'
 import type { Database } from '#server/db/client'
-import type { DayRange } from '#server/db/day-range'
+import { dayRangeKey, type DayRange } from '#server/db/day-range'
 import { authorise } from '#server/services/access/authorise'
 import { sharedRead } from '#server/utils/shared-read'
 import { readStockRows, type StockRows, type StockRowsInRange } from './forecast-rows'
@@ -15,6 +16,9 @@ const DEWAR_LOSS_PER_HOUR = 0.01 / 24
 
 /** The gauges of the storage dewars are good to about two per cent of what they hold (common practice, no source). */
 const STOCK_SHARE_SD = 0.02
+
+/** Finer than a drawing of the stock can show. */
+const DRAWN_LITRES = 0.2
 
 /** What is asked of the forecast: days of the facility as for the board, and who asks. */
 export interface HeliumForecastQuery { actor: Actor, from?: string, to?: string, now: Date }
@@ -57,7 +61,7 @@ export async function readHeliumForecast(db: Database, { actor, from, to, now }:
 }
 
 /** The whole strip; forecasts are the same for everybody, so people who ask at the same moment share them. */
-const readStrip = sharedRead<DayRange, HeliumForecastReply>(({ from, to }) => `${from}/${to}`, async (db, range) => {
+const readStrip = sharedRead<DayRange, HeliumForecastReply>(dayRangeKey, async (db, range) => {
   const rows = await readStockRows(db, range)
   const [fromMs, until] = [Date.parse(rows.fromAt), new Date(rows.toAt)]
   const input = until > range.now ? toForecastInput(rows, { now: range.now, until }) : undefined
@@ -94,10 +98,11 @@ function historyOf({ stockMg, changes, fromAt, toAt }: StockRowsInRange, now: Da
   return [...points, { at: new Date(end).toISOString(), litres: round(heliumLitresFromMg(balanceMg)) }]
 }
 
-/** Points the range shows, with the one before it, so that the line reaches its edge. */
+/** Points the range shows and a drawing needs, with the one before it, so that the line reaches its edge. */
 function fromDay(points: readonly ForecastPoint[], fromMs: number): readonly ForecastPoint[] {
   const first = points.findIndex(point => point.atMs >= fromMs)
-  return first <= 0 ? points : points.slice(first - 1)
+  const shown = first <= 0 ? points : points.slice(first - 1)
+  return thinPoints(shown.map(({ atMs, lowLitres, likelyLitres, highLitres }) => ({ atMs, lowLitres, likelyLitres, highLitres })), DRAWN_LITRES)
 }
 
 function toStockForecast<Point extends StockPoint>(forecast: HeliumForecast, { reserveLitres, timeZone }: StockRows, fromMs: number, toPoint: (point: ForecastPoint) => Point): StockForecast<Point> {

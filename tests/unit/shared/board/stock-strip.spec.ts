@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { stockArea, stockAtMs, stockBand, stockLine, stripTop } from '#shared/board/stock-strip'
+import { stockArea, stockAtMs, stockBand, stockLine, stripTop, thinPoints } from '#shared/board/stock-strip'
 
 const frame = { x: (atMs: number) => atMs, y: (litres: number) => 100 - litres }
 const points = [{ atMs: 0, litres: 40 }, { atMs: 10, litres: 20 }, { atMs: 10, litres: 60 }]
@@ -22,5 +22,15 @@ describe('the helium strip', () => {
   it('ends the axis at a round number above everything', () => {
     // 1.08 × 205 = 221.4 → 250; 1.08 × 80 = 86.4 → 100; 1.08 × 470 = 507.6 → 600; at least 1.08 → 1.5.
     expect([[205, 80], [80], [470], []].map(stripTop)).toEqual([250, 100, 600, 1.5])
+  })
+
+  it('leaves out points on a straight line, and keeps bends, steps and ends', () => {
+    const line = (...litres: number[]) => litres.map((value, index) => ({ atMs: index * 6, litres: value, low: value - 5 }))
+    expect(thinPoints(line(100, 98, 96, 94, 80, 66), 0.1).map(({ atMs }) => atMs)).toEqual([0, 18, 30])
+    // 0.3 off the line is kept at a tolerance of 0.1, and left out at 0.5.
+    expect(thinPoints(line(100, 98.3, 96), 0.1)).toHaveLength(3)
+    expect(thinPoints(line(100, 98.3, 96), 0.5)).toHaveLength(2)
+    const step = [{ atMs: 0, litres: 10 }, { atMs: 6, litres: 10 }, { atMs: 6, litres: 50 }, { atMs: 12, litres: 50 }]
+    expect(thinPoints(step, 0.1)).toEqual(step)
   })
 })
