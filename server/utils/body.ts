@@ -1,24 +1,38 @@
 import type { H3Event } from 'h3'
 import { createError } from 'h3'
+import { DomainError } from '#shared/errors'
 
 /** Limits in bytes by kind of body. */
 export const BODY_LIMIT = { json: 1_000_000, upload: 50_000_000 } as const
+
+/** A body over the limit is read on and thrown away up to this many times the limit, so that the sender can read the refusal. */
+const DRAIN_FACTOR = 4
 
 /**
  * Reads a request body, counting the bytes that come and not those announced.
  *
  * @param event the request
- * @param limitBytes more than this is refused with 413 and the reading stops
+ * @param limitBytes more than this is refused with 413 and kept no longer
+ * @throws DomainError `invalid` when the sender breaks off
  */
-export async function readLimitedBody(event: H3Event, limitBytes: number): Promise<Buffer> {
-  const chunks: Buffer[] = []
-  let received = 0
-  for await (const chunk of event.node.req) {
-    received += (chunk as Buffer).length
-    if (received > limitBytes) throw bodyTooLarge(limitBytes)
-    chunks.push(chunk as Buffer)
-  }
-  return Buffer.concat(chunks)
+export function readLimitedBody(event: H3Event, limitBytes: number): Promise<Buffer> {
+  const { req } = event.node
+  const brokenOff = new DomainError('invalid', 'The request was broken off before it was complete. Send it again.')
+  if (req.destroyed) return Promise.reject(brokenOff)
+  return new Promise((resolve, reject) => {
+    const chunks: Buffer[] = []
+    let received = 0
+    req.on('data', (chunk: Buffer) => {
+      received += chunk.length
+      if (received <= limitBytes) return void chunks.push(chunk)
+      chunks.length = 0
+      reject(bodyTooLarge(limitBytes))
+      if (received > DRAIN_FACTOR * limitBytes) req.destroy()
+    })
+    req.once('end', () => resolve(Buffer.concat(chunks)))
+    req.once('close', () => reject(brokenOff))
+    req.once('error', reject)
+  })
 }
 
 function bodyTooLarge(limitBytes: number) {
