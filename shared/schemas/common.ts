@@ -10,8 +10,14 @@ export const idSchema = z.string({ required_error: 'Choose one from the list.' }
 /** The browser's own key of a request, under which it is done once however often it is sent. */
 export const clientKeySchema = z.string({ required_error: 'This page has no key for its request. Reload it and send it again.' }).uuid('The key of this request is not valid. Reload the page and send it again.')
 
-/** An instant with its offset, ISO 8601. */
-export const instantSchema = z.string({ required_error: 'Enter a date and time.' }).datetime({ offset: true, message: 'Enter a date and time.' }).transform(text => new Date(text))
+/**
+ * An instant with its offset, ISO 8601. A Date passes too: forms run their first values through the schema, and what
+ * comes out must go in again.
+ */
+export const instantSchema: z.ZodType<Date, z.ZodTypeDef, string> = z.preprocess(
+  value => value instanceof Date && !Number.isNaN(value.getTime()) ? value.toISOString() : value,
+  z.string({ required_error: 'Enter a date and time.', invalid_type_error: 'Enter a date and time.' }).datetime({ offset: true, message: 'Enter a date and time.' }).transform(text => new Date(text)),
+) as z.ZodType<Date, z.ZodTypeDef, string>
 
 /** A calendar day. */
 export const daySchema = z.string({ required_error: 'Enter a date such as 2027-05-04.' }).regex(/^\d{4}-\d{2}-\d{2}$/, 'Enter a date such as 2027-05-04.')

@@ -53,6 +53,8 @@ describe('instants, days, times and ids', () => {
     ['2027-05-04T09:00:00.250-03:30', '2027-05-04T12:30:00.250Z'], // 09:00 + 3:30
   ])('reads the instant %s', (text, instant) => {
     expect(instantSchema.parse(text).toISOString()).toBe(instant)
+    // What came out goes in again: forms run their first values through the schema.
+    expect(instantSchema.parse(instantSchema.parse(text)).toISOString()).toBe(instant)
   })
 
   it.each([
