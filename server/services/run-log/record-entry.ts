@@ -54,7 +54,8 @@ export async function recordEntry(db: Database, input: { runId: string, actor: A
 }
 
 function checkInstant(startedAt: Date, at: Date, now: Date) {
-  if (at < startedAt) throw new DomainError('invalid', 'This time is before the run started. Enter a time after the start.', ['at'])
+  // Times are typed to the minute: one within the minute of the start is not before it.
+  if (at.getTime() < Math.floor(startedAt.getTime() / 60_000) * 60_000) throw new DomainError('invalid', 'This time is before the run started. Enter a time after the start.', ['at'])
   if (at.getTime() > now.getTime() + CLOCK_TOLERANCE_MS) throw new DomainError('invalid', 'This time is still to come. Enter the time at which it was read.', ['at'])
 }
 
