@@ -44,7 +44,7 @@ async function seedResult(db: Database, { run, spec, group }: SeededRun, { files
   const actor: Actor = { personId: group.memberId, isManager: false, isOperator: false, memberships: [{ groupId: group.id, role: 'member' }] }
   const factor = random.chance(SLIP_CHANCE) ? random.pick([1000, 0.001]) : 1
   const isStandard = run.title === 'Cu standard'
-  const { datasetId } = await uploadDataset(db, files, { runId: run.id, role: isStandard ? 'copper-standard' : 'measurement', file: { name: `run-${run.number}.csv`, content: new TextEncoder().encode(tableOf(spec, factor, random)) }, actor })
+  const { datasetId } = await uploadDataset(db, files, { runId: run.id, role: isStandard ? 'copper-standard' : 'measurement', file: { name: `run-${run.number}.csv`, content: new TextEncoder().encode(tableOf(spec, factor, random)) }, actor, now: new Date(run.finishedAt!.getTime() + 1_800_000) })
   const { sample } = spec
   await mapDataset(db, files, {
     datasetId, actor, restoredRows: [], sampleId: sample.id,

@@ -1,7 +1,6 @@
 import { and, desc, eq, ilike, inArray, isNotNull, isNull, lt, or, sql, type SQL } from 'drizzle-orm'
 import { type Actor, hasFacilityRole } from '#shared/access/rules'
 import { DomainError } from '#shared/errors'
-import type { Verdict } from '#shared/heat-capacity/types'
 import type { ResultListQuery } from '#shared/schemas/results'
 import type { ResultList, ResultListItem } from '#shared/types/results'
 import type { Database } from '#server/db/client'
@@ -28,15 +27,8 @@ export async function listResults(db: Database, query: ResultListQuery & { actor
   if (hasFacilityRole(actor) || groupIds.length === 0) authorise(actor, 'dataset:read')
   for (const groupId of groupIds) authorise(actor, 'dataset:read', { groupId })
 
-  // Only the few numbers of the list leave the stored result, which also holds a residual for every point.
-  const latest = db.select({
-    analysisId: analyses.id,
-    verdict: analyses.verdict,
-    createdAt: sql<Date>`${analyses.createdAt}`.mapWith(analyses.createdAt).as('analysed_at'),
-    gamma: sql<NumberWithError | null>`${analyses.result} #> '{fit,coefficients,gamma}'`.as('gamma'),
-    debye: sql<NumberWithError | null>`${analyses.result} #> '{fit,debyeTemperature}'`.as('debye'),
-    statuses: sql<string[]>`jsonb_path_query_array(${analyses.result}, '$.checks[*].status')`.as('statuses'),
-  }).from(analyses).where(eq(analyses.datasetId, datasets.id)).orderBy(desc(analyses.createdAt), desc(analyses.id)).limit(1).as('latest')
+  const latest = db.select({ analysisId: analyses.id, verdict: analyses.verdict, createdAt: sql<Date>`${analyses.createdAt}`.mapWith(analyses.createdAt).as('analysed_at') })
+    .from(analyses).where(eq(analyses.datasetId, datasets.id)).orderBy(desc(analyses.createdAt), desc(analyses.id)).limit(1).as('latest')
   const accepted = db.select({ accepted: signOffs.accepted }).from(signOffs).where(eq(signOffs.analysisId, latest.analysisId)).orderBy(desc(signOffs.at), desc(signOffs.id)).limit(1).as('signed')
 
   const conditions: (SQL | undefined)[] = [
@@ -54,7 +46,7 @@ export async function listResults(db: Database, query: ResultListQuery & { actor
     groupName: groups.name,
     sample: { name: samples.name, formula: samples.formula },
     mappedFormula: sql<string | null>`${datasets.mapping} #>> '{sample,formula}'`,
-    latest: { analysisId: latest.analysisId, verdict: latest.verdict, createdAt: latest.createdAt, gamma: latest.gamma, debye: latest.debye, statuses: latest.statuses },
+    latest: { analysisId: latest.analysisId, verdict: latest.verdict, createdAt: latest.createdAt },
     accepted: accepted.accepted,
   }).from(datasets)
     .innerJoin(runs, eq(runs.id, datasets.runId)).innerJoin(cryostats, eq(cryostats.id, runs.cryostatId)).innerJoin(groups, eq(groups.id, runs.groupId))
@@ -63,6 +55,7 @@ export async function listResults(db: Database, query: ResultListQuery & { actor
 
   const page = rows.slice(0, PAGE_SIZE)
   const last = page.at(-1)?.dataset
+  const numbers = await numbersOf(db, page.flatMap(row => row.latest?.analysisId ?? []))
   const { timeZone } = await readFacility(db)
   return {
     timeZone,
@@ -70,23 +63,25 @@ export async function listResults(db: Database, query: ResultListQuery & { actor
       datasetId: dataset.id, role: dataset.role, originalName: dataset.originalName, runId: run.id, runNumber: run.number, cryostatName, groupName,
       sampleName: sample?.name ?? null, formula: mappedFormula ?? sample?.formula ?? null,
       uploadedAt: dataset.createdAt.toISOString(), mapped: dataset.mapped, pointCount: dataset.pointCount,
-      latest: latest?.analysisId ? latestOf({ ...latest, accepted }) : null,
+      latest: latest?.analysisId ? { ...numbers.get(latest.analysisId)!, analysisId: latest.analysisId, verdict: latest.verdict, createdAt: latest.createdAt.toISOString(), signed: accepted === null ? null : accepted ? 'accepted' : 'refused' } : null,
     })),
     nextCursor: rows.length > PAGE_SIZE && last ? `${last.createdAt.toISOString()}_${last.id}` : null,
   }
 }
 
-function latestOf(row: { analysisId: string, verdict: Verdict, createdAt: Date, gamma: NumberWithError | null, debye: NumberWithError | null, statuses: string[], accepted: boolean | null }): ResultListItem['latest'] {
-  const count = (status: string) => row.statuses.filter(each => each === status).length
-  return {
-    analysisId: row.analysisId,
-    verdict: row.verdict,
-    checkCounts: { ok: count('ok'), caution: count('caution'), fail: count('fail') },
-    gamma: numberOf(row.gamma),
-    debyeTemperatureK: numberOf(row.debye),
-    createdAt: row.createdAt.toISOString(),
-    signed: row.accepted === null ? null : row.accepted ? 'accepted' : 'refused',
-  }
+/** The few numbers that the list shows; a stored result also holds a residual for every point, so only those of one page are opened. */
+async function numbersOf(db: Database, analysisIds: string[]): Promise<Map<string, Pick<NonNullable<ResultListItem['latest']>, 'checkCounts' | 'gamma' | 'debyeTemperatureK'>>> {
+  if (analysisIds.length === 0) return new Map()
+  const rows = await db.select({
+    id: analyses.id,
+    gamma: sql<NumberWithError | null>`${analyses.result} #> '{fit,coefficients,gamma}'`,
+    debye: sql<NumberWithError | null>`${analyses.result} #> '{fit,debyeTemperature}'`,
+    statuses: sql<string[]>`jsonb_path_query_array(${analyses.result}, '$.checks[*].status')`,
+  }).from(analyses).where(inArray(analyses.id, analysisIds))
+  return new Map(rows.map(({ id, gamma, debye, statuses }) => {
+    const count = (status: string) => statuses.filter(each => each === status).length
+    return [id, { checkCounts: { ok: count('ok'), caution: count('caution'), fail: count('fail') }, gamma: numberOf(gamma), debyeTemperatureK: numberOf(debye) }]
+  }))
 }
 
 /** A stored estimate without its unit. */

@@ -18,6 +18,7 @@ export interface DatasetUpload {
   role: DatasetRole
   file: { name: string, content: Uint8Array } | null
   actor: Actor
+  now?: Date
 }
 
 /**
@@ -30,7 +31,7 @@ export interface DatasetUpload {
  * @throws DomainError `invalid` for a file that is no text table, `conflict` before the run has started
  */
 export async function uploadDataset(db: Database, files: FileStore, upload: DatasetUpload): Promise<{ datasetId: string, existed: boolean }> {
-  const { runId, role, file, actor } = upload
+  const { runId, role, file, actor, now } = upload
   const [run] = await db.select().from(runs).where(eq(runs.id, runId))
   authorise(actor, 'dataset:upload', run ? { groupId: run.groupId } : {})
   if (!run) throw new DomainError('not-found', 'There is no such run.')
@@ -46,7 +47,7 @@ export async function uploadDataset(db: Database, files: FileStore, upload: Data
   if (before) return { datasetId: before.id, existed: true }
 
   const kept = await files.putFile(file.content)
-  const added = await insertDataset(db, { runId, role, originalName: plainName(file.name), fileKey: kept.key, bytes: kept.bytes, sha256, uploadedBy: actor.personId })
+  const added = await insertDataset(db, { runId, role, originalName: plainName(file.name), fileKey: kept.key, bytes: kept.bytes, sha256, uploadedBy: actor.personId, createdAt: now })
     .catch(async (error: unknown) => {
       await files.removeFile(kept.key)
       throw error

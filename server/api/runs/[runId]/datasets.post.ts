@@ -5,8 +5,8 @@ import { useFileStore } from '#server/utils/files'
 import { readUpload } from '#server/utils/multipart'
 
 /** Takes in a measured table as it came. */
-export default defineApi({ access: 'dataset:upload', params: runDatasetParams, status: 201 }, async ({ event, db, actor, params }) => {
+export default defineApi({ access: 'dataset:upload', params: runDatasetParams, status: 201 }, async ({ event, db, actor, params, now }) => {
   const { files, fields } = await readUpload(event)
   const role = datasetRoleSchema.parse(fields.role ?? 'measurement', { path: ['role'] })
-  return uploadDataset(db, useFileStore(), { runId: params.runId, role, file: files.file ?? null, actor })
+  return uploadDataset(db, useFileStore(), { runId: params.runId, role, file: files.file ?? null, actor, now })
 })
