@@ -1,35 +1,39 @@
 import { defineStore } from 'pinia'
 
 /** A line of the run sheet that the server has not taken yet. */
-export interface QueuedEntry { runId: string, clientKey: string, body: Record<string, unknown>, refusal: string | null }
+export interface QueuedEntry { personId: string, runId: string, clientKey: string, body: Record<string, unknown>, refusal: string | null }
 
 const KEY = 'holdtime-entry-queue'
 const RETRY_MS = 5000
 
 /**
- * Lines of the run sheet on their way. They survive a lost connection and a reload; the client key makes sending one
+ * Lines of the run sheet on their way. On a shared terminal each person's lines wait for that person to sign in again.
+ * They survive a lost connection and a reload; the client key makes sending one
  * twice record it once. A line that the server refuses stays, with its sentence, until it is corrected or dropped.
  */
 export const useEntryQueueStore = defineStore('entry-queue', () => {
-  const entries = ref<QueuedEntry[]>([])
+  const all = ref<QueuedEntry[]>([])
+  const { data: session } = useAuth()
+  const personId = computed(() => session.value?.user.personId ?? '')
+  const entries = computed(() => all.value.filter(entry => entry.personId === personId.value))
   const isSending = ref(false)
   let timer: ReturnType<typeof setTimeout> | undefined
 
   function keep() {
-    localStorage.setItem(KEY, JSON.stringify(entries.value))
+    localStorage.setItem(KEY, JSON.stringify(all.value))
   }
 
   function load() {
-    if (import.meta.client) entries.value = JSON.parse(localStorage.getItem(KEY) ?? '[]') as QueuedEntry[]
+    if (import.meta.client) all.value = JSON.parse(localStorage.getItem(KEY) ?? '[]') as QueuedEntry[]
   }
 
   function add(runId: string, body: Record<string, unknown>) {
-    entries.value.push({ runId, clientKey: String(body.clientKey), body, refusal: null })
+    all.value.push({ personId: personId.value, runId, clientKey: String(body.clientKey), body, refusal: null })
     keep()
   }
 
   function drop(clientKey: string) {
-    entries.value = entries.value.filter(entry => entry.clientKey !== clientKey)
+    all.value = all.value.filter(entry => entry.clientKey !== clientKey)
     keep()
   }
 
