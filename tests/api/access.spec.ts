@@ -13,7 +13,7 @@ const FACILITY: Role[] = ['manager', 'operator']
 const READERS: Role[] = ['manager', 'operator', 'own member', 'own PI']
 const OWN: Role[] = ['own member', 'own PI']
 
-interface Row { may: readonly Role[], body?: unknown, query?: string }
+interface Row { may: readonly Role[], body?: unknown, query?: string, file?: string }
 const uuid = '01a20000-0000-7000-8000-000000000000'
 const now = new Date().toISOString()
 // Valid, but on a run that is settled or an object that is not there: who may gets as far as a conflict or a sentence.
@@ -44,7 +44,7 @@ const TABLE: Record<string, Row> = {
   'POST /api/runs/:run/start': { may: FACILITY, body: {} },
   'POST /api/runs/:run/entries': { may: FACILITY, body: note },
   'POST /api/runs/:run/finish': { may: FACILITY, body: { operatorHours: 1 } },
-  'POST /api/runs/:run/datasets': { may: READERS },
+  'POST /api/runs/:run/datasets': { may: READERS, file: 'T/K,C/(mJ/(mol K))\n2,1\n3,2\n' },
   'GET /api/samples': { may: EVERYONE },
   'POST /api/samples': { may: ['manager', ...OWN], body: sample },
   'GET /api/samples/:sample': { may: READERS },
@@ -54,8 +54,8 @@ const TABLE: Record<string, Row> = {
   'GET /api/datasets/:dataset/file': { may: READERS },
   'GET /api/datasets/:dataset/points': { may: READERS },
   'GET /api/datasets/:dataset/preview': { may: READERS },
-  'PUT /api/datasets/:dataset/mapping': { may: READERS, body: {} },
-  'POST /api/datasets/:dataset/analyses': { may: READERS, body: {} },
+  'PUT /api/datasets/:dataset/mapping': { may: READERS, body: { columns: { temperature: { column: 0, unit: 'K' }, heatCapacity: { column: 1, unit: 'mJ/(mol K)' } }, sample: { formula: 'Cu', kind: 'metal' } } },
+  'POST /api/datasets/:dataset/analyses': { may: READERS, body: { model: { terms: ['gamma', 'beta3'], windowK: [1.5, 9] } } },
   'GET /api/analyses/:analysis': { may: READERS },
   'POST /api/analyses/:analysis/sign-off': { may: ['manager', 'own PI'], body: { accepted: true, reason: 'x' } },
   'POST /api/analyses/:analysis/comments': { may: READERS, body: { text: 'x' } },
@@ -87,17 +87,22 @@ beforeAll(async () => {
   ids[':group'] = (await pi.get<{ groupId: string }>(`/api/samples/${ids[':sample']}`)).body.groupId
   ids[':invoice'] = (await pi.get<{ id: string }[]>('/api/invoices')).body[0]!.id
   ids[':cryostat'] = (await manager.get<{ cryostats: { id: string }[] }>('/api/cryostats')).body.cryostats[0]!.id
-  const results = (await pi.get<{ items: { datasetId: string, analysis: { id: string } | null }[] }>('/api/results')).body.items
-  const checked = results.find(result => result.analysis !== null)
-  if (checked?.analysis) Object.assign(ids, { ':dataset': checked.datasetId, ':analysis': checked.analysis.id })
+  const results = (await pi.get<{ items: { datasetId: string, latest: { analysisId: string } | null }[] }>('/api/results')).body.items
+  const checked = results.find(result => result.latest !== null)!
+  Object.assign(ids, { ':dataset': checked.datasetId, ':analysis': checked.latest!.analysisId })
 })
 
 const fill = (text: string) => text.replace(/:[a-z]+\b/g, name => ids[name] ?? name)
 
-async function statusOf(client: ApiClient, route: string, { body, query = '' }: Row): Promise<number> {
+async function statusOf(client: ApiClient, route: string, { body, query = '', file }: Row): Promise<number> {
   const [method = 'GET', path = ''] = route.split(' ')
   if (path.endsWith('/feed')) return feedStatus(client, fill(path))
-  const reply = await client.request(method, fill(path) + query, body === undefined ? undefined : JSON.parse(fill(JSON.stringify(body))))
+  const form = new FormData()
+  if (file) {
+    form.append('role', 'measurement')
+    form.append('file', new Blob([file], { type: 'text/csv' }), 'table.csv')
+  }
+  const reply = await client.request(method, fill(path) + query, file ? form : body === undefined ? undefined : JSON.parse(fill(JSON.stringify(body))))
   return reply.status
 }
 
