@@ -32,11 +32,13 @@ export function useDatasetAnalysis(dataset: Ref<DatasetView | null | undefined>,
   const refusal = ref('')
   const adviceRefusal = ref('')
 
+  // Apart from the choices, so that the plots do not draw the same points anew at every step of the window.
+  const measured = computed(() => points.value && toCurve(points.value))
   const input = computed<DatasetAnalysisInput | null>(() => {
     const { mapping, copperStandard, checkThresholds } = dataset.value ?? {}
-    if (!points.value || !mapping?.sample) return null
+    if (!measured.value || !mapping?.sample) return null
     return {
-      curve: toCurve(points.value), sample: mapping.sample, unit: mapping.columns.heatCapacity.unit, model: { terms: terms.value, windowK: windowK.value },
+      curve: measured.value, sample: mapping.sample, unit: mapping.columns.heatCapacity.unit, model: { terms: terms.value, windowK: windowK.value },
       holder: holder.value, correction: correction.value, standard: copperStandard ?? undefined, thresholds: checkThresholds ?? {},
     }
   })

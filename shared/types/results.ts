@@ -17,6 +17,9 @@ export interface RejectedRow {
   restorable?: boolean
 }
 
+/** Lines of a file by point: the first of consecutive ones, or each. */
+export type PackedRows = { first: number } | number[]
+
 /** How a table was read: its columns and units, and the sample facts that the conversion rests on. */
 export interface DatasetMapping {
   columns: ColumnMapping
@@ -27,7 +30,7 @@ export interface DatasetMapping {
   /** E.g. `molar mass 63.546 g/mol`. */
   conversionUses: string[]
   /** Line of the file of each point of the curve. */
-  rowNumbers?: readonly number[]
+  rowNumbers?: PackedRows
 }
 
 /** Who signed an analysis, or said why not. */

@@ -6,6 +6,7 @@ import type { Database } from '#server/db/client'
 import { analyses, cryostats, datasets, groups, people, runSamples, runs, samples, signOffs } from '#server/db/schema'
 import { readFacility } from '#server/services/facility/queries'
 import { copperHistory } from './copper-history'
+import { unpackRows } from './packed-rows'
 import { datasetFor } from './run-of'
 
 /**
@@ -58,7 +59,7 @@ export async function getDataset(db: Database, request: { datasetId: string, act
 export async function getPoints(db: Database, request: { datasetId: string, actor: Actor }): Promise<CurvePoints | null> {
   const { dataset } = await datasetFor(db, request.datasetId, request.actor, 'dataset:read')
   const { temperatureK, heatCapacity, sigma, mapping } = dataset
-  return temperatureK && heatCapacity ? { temperatureK, heatCapacity, sigma, rowNumbers: mapping?.rowNumbers ? [...mapping.rowNumbers] : null } : null
+  return temperatureK && heatCapacity ? { temperatureK, heatCapacity, sigma, rowNumbers: unpackRows(mapping?.rowNumbers, temperatureK.length) ?? null } : null
 }
 
 async function samplesOf(db: Database, runId: string): Promise<SampleChoice[]> {

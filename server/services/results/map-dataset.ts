@@ -13,6 +13,7 @@ import type { FileStore } from '#server/adapters/storage/files'
 import type { Database } from '#server/db/client'
 import { datasets, runSamples } from '#server/db/schema'
 import { writeAudit } from '#server/services/audit/write-audit'
+import { packRows } from './packed-rows'
 import { readRawFile } from './raw-file'
 import { datasetFor } from './run-of'
 
@@ -39,7 +40,7 @@ export async function mapDataset(db: Database, files: FileStore, request: MapDat
     await checkSample(tx, dataset.runId, request.sampleId)
     await tx.update(datasets).set({
       sampleId: request.sampleId ?? null,
-      mapping: { columns, sample, heads: [...table.heads], conversionUses: sample ? [...conversionUses] : [], rowNumbers: curve.rowNumbers },
+      mapping: { columns, sample, heads: [...table.heads], conversionUses: sample ? [...conversionUses] : [], rowNumbers: curve.rowNumbers && packRows(curve.rowNumbers) },
       rowCount: table.rowCount,
       rejectedRows: [...rejectedRows],
       temperatureK: [...curve.temperatureK],

@@ -13,6 +13,7 @@ import { writeAudit } from '#server/services/audit/write-audit'
 import { readFacility } from '#server/services/facility/queries'
 import { copperHistory } from './copper-history'
 import { curveSha256 } from './curve-hash'
+import { unpackRows } from './packed-rows'
 import { datasetFor } from './run-of'
 
 /** Who saves which analysis of which dataset. */
@@ -70,7 +71,8 @@ function measuredOf(dataset: Dataset): Pick<DatasetAnalysisInput, 'curve' | 'sam
 }
 
 function curveOf({ temperatureK, heatCapacity, sigma, mapping }: Dataset): HeatCapacityCurve {
-  return { temperatureK: temperatureK ?? [], heatCapacity: heatCapacity ?? [], ...(sigma ? { sigma } : {}), ...(mapping?.rowNumbers ? { rowNumbers: mapping.rowNumbers } : {}) }
+  const rowNumbers = unpackRows(mapping?.rowNumbers, temperatureK?.length ?? 0)
+  return { temperatureK: temperatureK ?? [], heatCapacity: heatCapacity ?? [], ...(sigma ? { sigma } : {}), ...(rowNumbers ? { rowNumbers } : {}) }
 }
 
 /** Addenda measured on the same cryostat that the actor may see. */
