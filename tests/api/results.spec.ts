@@ -6,7 +6,7 @@ import type { AnalysisView, CurvePoints, DatasetView, ResultList } from '#shared
 import type { RunList } from '#shared/types/runs'
 import { type ApiClient, anonymousClient, signedInClient } from '../support/client'
 
-const reference = (file: string) => readFile(new URL(`../reference/data/heat-capacity/${file}`, import.meta.url))
+const reference = async (file: string) => new Uint8Array(await readFile(new URL(`../reference/data/heat-capacity/${file}`, import.meta.url)))
 const OXIDE_MAPPING = { columns: { temperature: { column: 0, unit: 'K' }, heatCapacity: { column: 1, unit: 'J/(mol K)' } }, sample: { formula: 'Dy2O3', kind: 'insulator' } }
 
 function formOf(content: BlobPart, name: string, role = 'measurement') {
@@ -86,7 +86,7 @@ describe('results over HTTP', () => {
   })
 
   it('checks a table without storing it, from JSON and from a form alike, for whoever is signed in', async () => {
-    const text = (await reference('A_oxide_with_schottky_upturn_MIT.csv')).toString('utf8')
+    const text = new TextDecoder().decode(await reference('A_oxide_with_schottky_upturn_MIT.csv'))
     const request = { sample: OXIDE_MAPPING.sample, model: { terms: ['gamma', 'beta3'], windowK: [1.8, 14.5] } }
     const before = (await user.get<ResultList>('/api/results')).body.items.length
     const json = await user.post<HeatCapacityReport>('/api/heat-capacity/check', { ...request, table: { text, mapping: OXIDE_MAPPING.columns } })
