@@ -13,6 +13,7 @@ import { MODEL_TERMS } from '#shared/schemas/heat-capacity'
 import { copperReferenceHeatCapacity, COPPER_REFERENCE_RANGE_K } from '#shared/materials/copper-reference'
 import type { Random } from './random'
 import type { SeededRun } from './runs'
+import { weighingMg } from './samples'
 
 /** What seeding results needs. */
 export interface ResultTools { files: FileStore, random: Random, now: Date }
@@ -50,7 +51,7 @@ async function seedResult(db: Database, { run, spec, group }: SeededRun, { files
     datasetId, actor, restoredRows: [], sampleId: sample.id,
     columns: { temperature: { column: 0, unit: 'K' }, heatCapacity: { column: 1, unit: 'mJ/(mol K)' }, sigma: { column: 2, unit: 'mJ/(mol K)' } },
     sample: {
-      formula: sample.formula, kind: sample.kind, conductionElectrons: sample.conductionElectrons, massMg: sample.massMg, massUncertaintyMg: 0.1,
+      formula: sample.formula, kind: sample.kind, conductionElectrons: sample.conductionElectrons, massMg: sample.massMg, massUncertaintyMg: weighingMg(sample.massMg),
     },
   })
   const [dataset] = await db.select().from(datasets).where(eq(datasets.id, datasetId))

@@ -40,6 +40,11 @@ export const SUBSTANCES: Substance[] = [
 /** A substance with the id of its sample sheet. */
 export type SeededSample = Substance & { id: string, groupId: string }
 
+/** A balance of the facility reads to 0.02 mg; heavy pieces to 0.1 mg. */
+export function weighingMg(massMg: number): number {
+  return massMg < 50 ? 0.02 : 0.1
+}
+
 /** Sample sheets of the groups. */
 export async function seedSamples(db: Database, people: SeededPeople): Promise<SeededSample[]> {
   const rows = SUBSTANCES.map((substance) => {
@@ -48,7 +53,7 @@ export async function seedSamples(db: Database, people: SeededPeople): Promise<S
   })
   const inserted = await db.insert(samples).values(rows.map(({ substance, group }) => ({
     groupId: group.id, createdBy: group.memberId, name: substance.name, formula: substance.formula, kind: substance.kind, molarMassGPerMol: substance.molarMassGPerMol, atomsPerFormulaUnit: substance.atomsPerFormulaUnit,
-    massMg: substance.massMg, massUncertaintyMg: 0.1, densityGPerCm3: substance.densityGPerCm3 ?? null, conductionElectrons: substance.conductionElectrons ?? null, criticalTemperatureK: substance.criticalTemperatureK ?? null, hazards: substance.hazards ?? '',
+    massMg: substance.massMg, massUncertaintyMg: weighingMg(substance.massMg), densityGPerCm3: substance.densityGPerCm3 ?? null, conductionElectrons: substance.conductionElectrons ?? null, criticalTemperatureK: substance.criticalTemperatureK ?? null, hazards: substance.hazards ?? '',
   }))).returning({ id: samples.id })
   return rows.map(({ substance, group }, index) => ({ ...substance, id: inserted[index]!.id, groupId: group.id }))
 }
