@@ -28,6 +28,7 @@ export const datasets = pgTable('datasets', {
   createdAt: createdAt(),
 }, table => [
   index('datasets_run').on(table.runId),
+  index('datasets_newest').on(table.createdAt.desc(), table.id.desc()),
   // The same file twice on a run is one dataset: pressing twice does a thing once.
   uniqueIndex('datasets_once').on(table.runId, table.sha256, table.role),
   check('datasets_role', sql`${table.role} in ('measurement', 'addenda', 'copper-standard')`),

@@ -53,6 +53,7 @@ export const runs = pgTable('runs', {
   index('runs_cryostat_state').on(table.cryostatId, table.state),
   index('runs_group').on(table.groupId),
   index('runs_state').on(table.state),
+  index('runs_slot').using('gist', table.slot),
   check('runs_state', sql`${table.state} in ('draft', 'asked', 'approved', 'confirmed', 'running', 'finished', 'settled', 'declined', 'withdrawn', 'lapsed')`),
   check('runs_slot_bounded', sql`not isempty(${table.slot}) and not lower_inf(${table.slot}) and not upper_inf(${table.slot})`),
 ])
