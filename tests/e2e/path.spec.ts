@@ -64,9 +64,14 @@ async function refit(page: Page, model: { tail: boolean, window: [string, string
   await high.press('Enter')
   await low.fill(model.window[0])
   await low.press('Enter')
-  const saved = page.waitForResponse(reply => reply.url().endsWith('/analyses') && reply.request().method() === 'POST')
-  await page.getByRole('button', { name: 'Save analysis' }).click()
-  const { analysisId } = await (await saved).json() as { analysisId: string }
+  const [saved] = await Promise.all([
+    page.waitForResponse(reply => reply.url().endsWith('/analyses') && reply.request().method() === 'POST'),
+    page.getByRole('button', { name: 'Save analysis' }).click(),
+  ])
+  const { analysisId } = await saved.json() as { analysisId: string }
+  // The page then shows the saved analysis; what is chosen before that would be set back to it.
+  await page.waitForURL(url => url.searchParams.get('analysis') === analysisId)
+  await page.getByRole('button', { name: 'Save analysis' }).waitFor({ state: 'hidden' })
   return (await managerApi.get<{ result: HeatCapacityAnalysis }>(`/api/analyses/${analysisId}`)).body.result
 }
 
