@@ -9,11 +9,13 @@ import type { RunSheet, SheetEntry } from '#shared/types/runs'
 import { heliumLitresFromMg, MS_PER_HOUR } from '#shared/units/helium-units'
 import type { Database } from '#server/db/client'
 import { cryostats, heliumAccounts, heliumMovements, heliumPostings, people, rateCardPrices, runEntries, runs } from '#server/db/schema'
+import { authorise } from '#server/services/access/authorise'
 import { readHeliumBalances } from '#server/services/helium/account-queries'
 import { actualQuantities } from '#server/services/invoices/actual-quantities'
 import { readRun } from '#server/services/runs/queries'
 import { toHeliumLog } from './helium-log'
 import { readUsualBoilOff } from './history'
+import { sharedRead } from '#server/utils/shared-read'
 
 /** Readings are due this often while a run is cold (common practice, no source). */
 export const READING_EVERY_H = 8
@@ -24,8 +26,18 @@ export const READING_EVERY_H = 8
  * @param db database
  * @param input which run, who asks, and the instant
  */
-export async function readSheet(db: Database, input: { runId: string, actor: Actor, now: Date }): Promise<RunSheet> {
-  const { runId, actor, now } = input
+export async function readSheet(db: Database, input: SheetRequest): Promise<RunSheet> {
+  const sheet = await sharedSheet(db, input)
+  authorise(input.actor, 'run:read', { groupId: sheet.run.groupId })
+  return sheet
+}
+
+interface SheetRequest { runId: string, actor: Actor, now: Date }
+
+/** What a sheet comes to may lag the clock by up to a minute; what is on it never lags. */
+const keyOfSheet = ({ runId, actor, now }: SheetRequest) => `${runId} ${JSON.stringify(actor)} ${Math.floor(now.getTime() / 60_000)}`
+
+const sharedSheet = sharedRead(keyOfSheet, async (db: Database, { runId, actor, now }: SheetRequest): Promise<RunSheet> => {
   const detail = await readRun(db, { runId, actor })
   const [row] = await db.select({ run: runs, cryostat: cryostats, prices: rateCardPrices }).from(runs).innerJoin(cryostats, eq(cryostats.id, runs.cryostatId))
     .leftJoin(rateCardPrices, and(eq(rateCardPrices.rateCardId, runs.rateCardId), eq(rateCardPrices.groupClass, detail.groupClass))).where(eq(runs.id, runId))
@@ -58,7 +70,7 @@ export async function readSheet(db: Database, input: { runId: string, actor: Act
     nextReadingAt: run.state === 'running' ? new Date((lastReading?.at ?? run.startedAt ?? now).getTime() + READING_EVERY_H * MS_PER_HOUR).toISOString() : null,
     plannedProfile: temperatureProfile(hours, cryostat.baseTemperatureK).map(({ hour, temperatureK }) => ({ hour, temperatureK })),
   }
-}
+})
 
 /** Helium that came back to recovery in a run, mg, by the books. */
 export async function readReturnedMg(db: Database, runId: string): Promise<number> {

@@ -8,6 +8,7 @@ import type { Database } from '#server/db/client'
 import { cryostats, groups, invoices, payments, people, runs, runSamples, runTransitions, samples } from '#server/db/schema'
 import { authorise } from '#server/services/access/authorise'
 import { readFacility } from '#server/services/facility/queries'
+import { sharedRead } from '#server/utils/shared-read'
 
 const PAGE_SIZE = 50
 
@@ -36,10 +37,16 @@ function visibleTo(actor: Actor): SQL | undefined {
  * @param db database
  * @param input who asks, states to narrow to (comma-separated), and the number to go on from
  */
-export async function listRuns(db: Database, input: { actor: Actor, state?: string, cursor?: string }): Promise<RunList> {
-  const { actor, state, cursor } = input
-  // The condition below is the check: it narrows the list to what the actor may read.
+export function listRuns(db: Database, input: RunListRequest): Promise<RunList> {
+  const { actor } = input
+  // What is loaded is narrowed to what the actor may read.
   authorise(actor, 'run:read', { groupId: actor.memberships[0]?.groupId })
+  return sharedList(db, input)
+}
+
+interface RunListRequest { actor: Actor, state?: string, cursor?: string }
+
+const sharedList = sharedRead(JSON.stringify, async (db: Database, { actor, state, cursor }: RunListRequest): Promise<RunList> => {
   const states = (state?.split(',') ?? []).filter((word): word is RunState => (RUN_STATES as readonly string[]).includes(word))
   const before = Number(cursor)
   const rows = await db.select(listColumns).from(runs)
@@ -49,7 +56,7 @@ export async function listRuns(db: Database, input: { actor: Actor, state?: stri
   const items = rows.slice(0, PAGE_SIZE).map(toListItem)
   const { timeZone } = await readFacility(db)
   return { items, nextCursor: rows.length > PAGE_SIZE ? String(items.at(-1)?.number) : null, timeZone }
-}
+})
 
 /**
  * A run with everything its page shows, redacted to what the actor may see.
@@ -58,8 +65,15 @@ export async function listRuns(db: Database, input: { actor: Actor, state?: stri
  * @param input which run, and who asks
  * @throws DomainError `not-found` for a run that is not there or not theirs
  */
-export async function readRun(db: Database, input: { runId: string, actor: Actor }): Promise<RunDetail> {
-  const { runId, actor } = input
+export async function readRun(db: Database, input: RunRequest): Promise<RunDetail> {
+  const run = await sharedRun(db, input)
+  authorise(input.actor, 'run:read', { groupId: run.groupId })
+  return run
+}
+
+interface RunRequest { runId: string, actor: Actor }
+
+const sharedRun = sharedRead(JSON.stringify, async (db: Database, { runId, actor }: RunRequest): Promise<RunDetail> => {
   const [row] = await db.select({
     run: runs, list: listColumns, groupClass: groups.class, cryostatSlug: cryostats.slug, usesLiquid: cryostats.usesLiquid, requestedBy: people.name,
   }).from(runs).innerJoin(cryostats, eq(cryostats.id, runs.cryostatId)).innerJoin(groups, eq(groups.id, runs.groupId)).innerJoin(people, eq(people.id, runs.requestedBy))
@@ -97,7 +111,7 @@ export async function readRun(db: Database, input: { runId: string, actor: Actor
       upload: can(actor, 'dataset:upload', object) && ['running', 'finished', 'settled'].includes(run.state),
     },
   }
-}
+})
 
 /** Runs in a state, for lists of the desk and of today. */
 export async function listRunsInStates(db: Database, states: RunState[], condition?: SQL): Promise<RunListItem[]> {
