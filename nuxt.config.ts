@@ -29,6 +29,11 @@ export default defineNuxtConfig({
     '/api/**': { headers: { 'cache-control': 'no-store' } },
   },
 
+  experimental: {
+    // Pages are fetched ahead when a link is pointed at, not when it is seen: the rail shows a dozen links on every page.
+    defaults: { nuxtLink: { prefetchOn: { visibility: false, interaction: true } } },
+  },
+
   compatibilityDate: '2026-03-01',
 
   nitro: {
