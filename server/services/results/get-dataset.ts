@@ -4,7 +4,9 @@ import { lastStandardReading } from '#shared/heat-capacity/copper-standard'
 import type { AnalysisSummary, CurvePoints, DatasetView, SampleChoice } from '#shared/types/results'
 import type { Database } from '#server/db/client'
 import { analyses, cryostats, datasets, groups, people, runSamples, runs, samples, signOffs } from '#server/db/schema'
+import { authorise } from '#server/services/access/authorise'
 import { readFacility } from '#server/services/facility/queries'
+import { sharedRead } from '#server/utils/shared-read'
 import { copperHistory } from './copper-history'
 import { unpackRows } from './packed-rows'
 import { datasetFor } from './run-of'
@@ -16,8 +18,15 @@ import { datasetFor } from './run-of'
  * @param request which dataset and who asks
  * @throws DomainError `not-found` when the actor may not see it
  */
-export async function getDataset(db: Database, request: { datasetId: string, actor: Actor }): Promise<DatasetView> {
-  const { datasetId, actor } = request
+export async function getDataset(db: Database, request: DatasetRequest): Promise<DatasetView> {
+  const { view, groupId } = await sharedDataset(db, request)
+  authorise(request.actor, 'dataset:read', { groupId })
+  return view
+}
+
+interface DatasetRequest { datasetId: string, actor: Actor }
+
+const sharedDataset = sharedRead(JSON.stringify, async (db: Database, { datasetId, actor }: DatasetRequest): Promise<{ view: DatasetView, groupId: string }> => {
   const { run } = await datasetFor(db, datasetId, actor, 'dataset:read')
   const { temperatureK: _, heatCapacity: __, sigma: ___, mapping: ____, ...columns } = getTableColumns(datasets)
   const [row] = await db.select({
@@ -33,7 +42,7 @@ export async function getDataset(db: Database, request: { datasetId: string, act
   const readings = await copperHistory(db, run.cryostatId)
   const earlier = readings.filter(reading => reading.datasetId !== datasetId).map(reading => ({ ...reading, at: new Date(reading.at) }))
   const may = (action: 'dataset:upload' | 'analysis:write' | 'analysis:sign') => can(actor, action, { groupId: run.groupId })
-  return {
+  const view: DatasetView = {
     id: dataset.id, role: dataset.role, originalName: dataset.originalName, bytes: dataset.bytes, sha256: dataset.sha256,
     uploadedAt: dataset.createdAt.toISOString(), uploadedByName: dataset.uploadedByName, timeZone,
     run: { id: run.id, number: run.number, title: run.title, cryostatName: dataset.cryostatName, startsAt: run.slot.startsAt.toISOString(), endsAt: run.slot.endsAt.toISOString(), groupName: dataset.groupName },
@@ -47,7 +56,8 @@ export async function getDataset(db: Database, request: { datasetId: string, act
     checkThresholds,
     may: { map: may('dataset:upload'), analyse: may('analysis:write'), sign: may('analysis:sign') },
   }
-}
+  return { view, groupId: run.groupId }
+})
 
 /**
  * The points of a mapped dataset.
